@@ -356,7 +356,7 @@ export const dimensions = {
     unit: 'kg s/m³',
     examples: ['700 kg*s/m^3'],
   },
-  ratio: { phrase: 'a plain number', exponents: none, unit: '', examples: ['0.85', '85 %'] },
+  number: { phrase: 'a plain number', exponents: none, unit: '', examples: ['0.85', '85 %'] },
 } as const satisfies Record<string, DimensionDescription>;
 
 /** Name of a dimension that a typed quantity may have. */
