@@ -34,7 +34,8 @@ export function monotoneCubic(position: ArrayLike<number>, value: ArrayLike<numb
   }
   for (let i = 0; i < n - 1; i++) {
     h[i] = x[i + 1]! - x[i]!;
-    if (!(h[i]! > 0)) throw new RangeError(`position must rise strictly, got ${x[i]} then ${x[i + 1]} at point ${i + 1}`);
+    if (!(h[i]! > 0))
+      throw new RangeError(`position must rise strictly, got ${x[i]} then ${x[i + 1]} at point ${i + 1}`);
     secant[i] = (y[i + 1]! - y[i]!) / h[i]!;
   }
   const slope = new Float64Array(n);
