@@ -1,7 +1,7 @@
 import { getNextSnapshot } from 'xstate';
 import { revisionMachine } from './machine';
 import type { RevisionEvent } from './machine';
-import { mayHappen } from './rules';
+import { mayBeSentBy, mayHappen } from './rules';
 import type { RuleEvent, Verdict } from './rules';
 import type { Actor, RevisionEventType, RevisionFacts, RevisionState } from './vocabulary';
 import { eventTypes, stateWords } from './vocabulary';
@@ -39,17 +39,23 @@ export function offersFor(
   return { availableEvents, whyNot };
 }
 
+/** What stands in the way of a refused step: the state it is in, the person who asks, or how things stand. */
+export type Obstacle = 'state' | 'person' | 'facts';
+export type Step =
+  | { accepted: true; state: RevisionState; facts: RevisionFacts }
+  | { accepted: false; reason: string; obstacle: Obstacle };
+
 /**
  * Takes one step. Returns the new state name and facts, or the reason why the step is refused; the caller stores both in
  * the transaction of the step.
  */
-export function step(
-  state: RevisionState,
-  facts: RevisionFacts,
-  event: RevisionEvent,
-): { accepted: true; state: RevisionState; facts: RevisionFacts } | { accepted: false; reason: string } {
+export function step(state: RevisionState, facts: RevisionFacts, event: RevisionEvent): Step {
   const verdict = verdictOn(state, facts, event);
-  if (verdict !== true) return { accepted: false, reason: verdict };
+  if (verdict !== true) {
+    const elsewhere = !eventsOf(state).includes(event.type);
+    const obstacle = elsewhere ? 'state' : mayBeSentBy(facts, event) === true ? 'facts' : 'person';
+    return { accepted: false, reason: verdict, obstacle };
+  }
   const next = getNextSnapshot(revisionMachine, revisionMachine.resolveState({ value: state, context: facts }), event);
   return { accepted: true, state: next.value, facts: next.context };
 }

@@ -35,6 +35,11 @@ export const revisionMachine = setup({
       mayHappen(context, event) === true && event.type === 'signResult' && event.result === 'conforming',
   },
   actions: {
+    // Who submits stands for the revision as much as who typed it, and may not decide on it afterwards.
+    countSubmitter: assign({
+      authorIds: ({ context, event }) =>
+        context.authorIds.includes(event.actor.id) ? context.authorIds : [...context.authorIds, event.actor.id],
+    }),
     countApproval: assign({ approvedBy: ({ context, event }) => [...context.approvedBy, event.actor.id] }),
     openRemark: assign(({ context, event }) =>
       event.type === 'remark'
@@ -74,7 +79,7 @@ export const revisionMachine = setup({
   states: {
     draft: {
       on: {
-        submit: { target: 'inReview', guard: 'allowed' },
+        submit: { target: 'inReview', guard: 'allowed', actions: 'countSubmitter' },
         abandon: { target: 'abandoned', guard: 'allowed' },
       },
     },

@@ -18,7 +18,8 @@ const holds =
     `This needs the role ${allowed.map((role) => roleWords[role]).join(' or ')}.`;
 
 const notOwnWork: Rule = (facts, { actor }) =>
-  !facts.authorIds.includes(actor.id) || 'You wrote or edited this revision; somebody else has to decide on it.';
+  !facts.authorIds.includes(actor.id) ||
+  'You wrote, edited or submitted this revision; somebody else has to decide on it.';
 
 const noObstacles: Rule = ({ submitObstacles }) => submitObstacles.length === 0 || submitObstacles.join(' ');
 
@@ -63,34 +64,46 @@ const evidenceComplete: Rule = (facts) => {
 const successorReleased: Rule = ({ laterReleased }) =>
   laterReleased !== null || 'No later revision of this design has been released.';
 
-/** Rules of each event, in the order in which a refusal is told. The chart decides in which states the event exists. */
-const rulesOf: Record<RevisionEventType, readonly Rule[]> = {
-  submit: [holds('designer'), noObstacles],
-  remark: [holds('reviewer', 'designer', 'releaseAuthority')],
-  closeRemark: [holds('reviewer', 'designer', 'releaseAuthority'), remarkIsOpen],
-  approve: [holds('reviewer'), notOwnWork, notYetApproved, blockingClosed],
-  requestChanges: [holds('reviewer', 'releaseAuthority'), notOwnWork],
-  rework: [holds('designer')],
-  startRun: [holds('bench')],
-  stopRun: [holds('bench')],
-  signResult: [holds('bench'), everyReadingTaken, resultFollowsReadings],
-  retest: [holds('bench')],
-  grantConcession: [holds('releaseAuthority'), notOwnWork],
-  returnToBench: [holds('releaseAuthority'), notOwnWork],
-  release: [holds('releaseAuthority'), notOwnWork, evidenceComplete, blockingClosed],
-  supersede: [holds('releaseAuthority'), notOwnWork, successorReleased],
-  recall: [holds('releaseAuthority')],
-  abandon: [holds('designer', 'releaseAuthority')],
+/**
+ * Rules of each event, in the order in which a refusal is told: first those that look at who asks, then those that look at
+ * how things stand. The chart decides in which states the event exists.
+ */
+const rulesOf: Record<RevisionEventType, { who: readonly Rule[]; what: readonly Rule[] }> = {
+  submit: { who: [holds('designer')], what: [noObstacles] },
+  remark: { who: [holds('reviewer', 'designer', 'releaseAuthority')], what: [] },
+  closeRemark: { who: [holds('reviewer', 'designer', 'releaseAuthority')], what: [remarkIsOpen] },
+  approve: { who: [holds('reviewer'), notOwnWork, notYetApproved], what: [blockingClosed] },
+  requestChanges: { who: [holds('reviewer', 'releaseAuthority'), notOwnWork], what: [] },
+  rework: { who: [holds('designer')], what: [] },
+  startRun: { who: [holds('bench')], what: [] },
+  stopRun: { who: [holds('bench')], what: [] },
+  signResult: { who: [holds('bench')], what: [everyReadingTaken, resultFollowsReadings] },
+  retest: { who: [holds('bench')], what: [] },
+  grantConcession: { who: [holds('releaseAuthority'), notOwnWork], what: [] },
+  returnToBench: { who: [holds('releaseAuthority'), notOwnWork], what: [] },
+  release: { who: [holds('releaseAuthority'), notOwnWork], what: [evidenceComplete, blockingClosed] },
+  supersede: { who: [holds('releaseAuthority'), notOwnWork], what: [successorReleased] },
+  recall: { who: [holds('releaseAuthority')], what: [] },
+  abandon: { who: [holds('designer', 'releaseAuthority')], what: [] },
 };
 
-/** Whether the event's own rules allow it, state aside. The first refusal is the answer. */
-export function mayHappen(facts: RevisionFacts, event: RuleEvent): Verdict {
-  for (const rule of rulesOf[event.type]) {
+const firstRefusal = (rules: readonly Rule[], facts: RevisionFacts, event: RuleEvent): Verdict => {
+  for (const rule of rules) {
     const verdict = rule(facts, event);
     if (verdict !== true) return verdict;
   }
   return true;
-}
+};
+
+/** Whether this person may ever send this event for this revision, however things stand. */
+export const mayBeSentBy = (facts: RevisionFacts, event: RuleEvent): Verdict =>
+  firstRefusal(rulesOf[event.type].who, facts, event);
+
+/** Whether the event's own rules allow it, state aside. The first refusal is the answer. */
+export const mayHappen = (facts: RevisionFacts, event: RuleEvent): Verdict => {
+  const verdict = mayBeSentBy(facts, event);
+  return verdict === true ? firstRefusal(rulesOf[event.type].what, facts, event) : verdict;
+};
 
 /** Approvals needed are reached once this approval is counted. */
 export const completesApproval = (facts: RevisionFacts): boolean =>

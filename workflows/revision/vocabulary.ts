@@ -112,14 +112,14 @@ export type Actor = z.infer<typeof Actor>;
  * facts that other parts own (remarks, runs, the estimate) are written in the same transaction as their change.
  */
 export const RevisionFacts = z.strictObject({
-  /** Everyone who created or saved this revision or an earlier one it was drafted from. */
+  /** Everyone who created, saved or submitted this revision or an earlier one it was drafted from. */
   authorIds: z.array(z.string()),
   /** Reasons why the draft cannot be submitted, in words; empty when it can (document, estimate, brief). */
   submitObstacles: z.array(z.string()),
   approvalsNeeded: z.number().int().min(1),
   approvedBy: z.array(z.string()),
   openBlockingRemarks: z.number().int().min(0),
-  /** Open remarks of any kind: id and whether it blocks. */
+  /** Open remarks of any kind. */
   openRemarkIds: z.array(z.string()),
   openRunId: z.string().nullable(),
   openRunStartedBy: z.string().nullable(),
