@@ -5,7 +5,7 @@ const NODES = [
   0.207784955007898467600689403773245, 0,
 ];
 const KRONROD = [
-  0.022935322010529224963732008058970, 0.063092092629978553290700663189204, 0.104790010322250183839876322541518,
+  0.02293532201052922496373200805897, 0.063092092629978553290700663189204, 0.104790010322250183839876322541518,
   0.140653259715525918745189590510238, 0.16900472663926790282829537374154, 0.190350578064785409913256402421014,
   0.204432940075298892414161999234649, 0.209482141084727828012999174891714,
 ];
@@ -60,7 +60,8 @@ export function integrateAdaptively(
   for (let n = 1; n < breaks.length; n++) {
     const from = breaks[n - 1]!;
     const to = breaks[n]!;
-    if (!Number.isFinite(from) || !Number.isFinite(to)) throw new RangeError(`break must be finite, got ${from}, ${to}`);
+    if (!Number.isFinite(from) || !Number.isFinite(to))
+      throw new RangeError(`break must be finite, got ${from}, ${to}`);
     if (to > from) pieces.push(measure(from, to));
   }
   const sum = (): void => {
@@ -74,7 +75,8 @@ export function integrateAdaptively(
   };
   const relativeError = (of: Float64Array): number => {
     let worst = 0;
-    for (let k = 0; k < count; k++) if (of[k]! > 0) worst = Math.max(worst, of[k]! / Math.max(Math.abs(totals[k]!), 1e-300));
+    for (let k = 0; k < count; k++)
+      if (of[k]! > 0) worst = Math.max(worst, of[k]! / Math.max(Math.abs(totals[k]!), 1e-300));
     return worst;
   };
   sum();

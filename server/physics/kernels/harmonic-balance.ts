@@ -101,8 +101,7 @@ export class HarmonicBalance {
       const theta = this.theta[n]!;
       const slope = oscillator.couplingSlope(u);
       // L = 0: θ i = θ² v / R, of which both the u- and the v-derivative are pointwise
-      this.stiffness[n] =
-        oscillator.restoringSlope(u) + slope * this.current[n]! + conductance * theta * slope * v;
+      this.stiffness[n] = oscillator.restoringSlope(u) + slope * this.current[n]! + conductance * theta * slope * v;
       this.resistive[n] = damping + 2 * drag * Math.abs(v) + conductance * theta * theta;
     }
     analyseInto(this.wideTable, this.stiffness, this.wideStiffness);
@@ -148,8 +147,7 @@ export class HarmonicBalance {
       for (let k = 1; k < size; k++) {
         const factor = left[row * size + k]!;
         if (factor === 0) continue;
-        for (let column = 0; column < size; column++)
-          out[row * size + column]! += factor * product[k * size + column]!;
+        for (let column = 0; column < size; column++) out[row * size + column]! += factor * product[k * size + column]!;
       }
   }
 

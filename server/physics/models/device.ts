@@ -123,7 +123,7 @@ export interface Response {
   loadPower: number | null;
   /** Largest excursion from the rest position, m. */
   displacementPeak: number | null;
-  /** rms of the excursion about its mean, m. */
+  /** rms of the excursion from the rest position, its mean included, m. */
   displacementRms: number | null;
   /** Of displacement relative to base acceleration, rad, in (−π, π]. */
   phase: number | null;
