@@ -45,4 +45,5 @@ export const freshFacts: RevisionFacts = {
   lastResult: null,
   concessionGranted: false,
   laterReleased: null,
+  continuedAs: null,
 };

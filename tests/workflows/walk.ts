@@ -34,6 +34,8 @@ export function formsOf(type: RevisionEventType, actor: Actor, facts: RevisionFa
         { type, actor, result: 'conforming' },
         { type, actor, result: 'nonconforming' },
       ];
+    case 'rework':
+      return [{ type, actor, letter: 'B' }];
     default:
       return [{ type, actor }];
   }

@@ -8,7 +8,7 @@ export type RevisionEvent =
   | { type: 'closeRemark'; actor: Actor; remarkId: string; blocking: boolean }
   | { type: 'approve'; actor: Actor }
   | { type: 'requestChanges'; actor: Actor }
-  | { type: 'rework'; actor: Actor }
+  | { type: 'rework'; actor: Actor; letter: string }
   | { type: 'startRun'; actor: Actor; runId: string; missingReadings: string[] }
   | { type: 'stopRun'; actor: Actor }
   | { type: 'signResult'; actor: Actor; result: RunResult }
@@ -70,6 +70,7 @@ export const revisionMachine = setup({
     closeRun: assign(runClosed),
     keepResult: assign(({ event }) => (event.type === 'signResult' ? { ...runClosed, lastResult: event.result } : {})),
     keepConcession: assign({ concessionGranted: true }),
+    keepContinuation: assign(({ event }) => (event.type === 'rework' ? { continuedAs: event.letter } : {})),
     forgetResult: assign({ lastResult: null, concessionGranted: false }),
   },
 }).createMachine({
@@ -98,7 +99,7 @@ export const revisionMachine = setup({
     changesRequested: {
       on: {
         closeRemark: { guard: 'allowed', actions: 'closeRemark' },
-        rework: { target: 'reworked', guard: 'allowed' },
+        rework: { target: 'reworked', guard: 'allowed', actions: 'keepContinuation' },
         abandon: { target: 'abandoned', guard: 'allowed' },
       },
     },
@@ -119,7 +120,7 @@ export const revisionMachine = setup({
     },
     nonconforming: {
       on: {
-        rework: { target: 'reworked', guard: 'allowed' },
+        rework: { target: 'reworked', guard: 'allowed', actions: 'keepContinuation' },
         retest: { target: 'clearedForBench', guard: 'allowed', actions: 'forgetResult' },
         grantConcession: { target: 'releaseReview', guard: 'allowed', actions: 'keepConcession' },
         abandon: { target: 'abandoned', guard: 'allowed' },
@@ -137,12 +138,14 @@ export const revisionMachine = setup({
     },
     released: {
       on: {
+        // What is released stays in force while its successor is drafted, reviewed and tested.
+        rework: { guard: 'allowed', actions: 'keepContinuation' },
         supersede: { target: 'superseded', guard: 'allowed' },
         recall: { target: 'recalled', guard: 'allowed' },
       },
     },
     superseded: { on: { recall: { target: 'recalled', guard: 'allowed' } } },
-    recalled: {},
+    recalled: { on: { rework: { guard: 'allowed', actions: 'keepContinuation' } } },
     reworked: {},
     abandoned: {},
   },

@@ -64,6 +64,9 @@ const evidenceComplete: Rule = (facts) => {
 const successorReleased: Rule = ({ laterReleased }) =>
   laterReleased !== null || 'No later revision of this design has been released.';
 
+const notContinued: Rule = ({ continuedAs }) =>
+  continuedAs === null || `Revision ${continuedAs} was drafted from this one already.`;
+
 /**
  * Rules of each event, in the order in which a refusal is told: first those that look at who asks, then those that look at
  * how things stand. The chart decides in which states the event exists.
@@ -74,7 +77,7 @@ const rulesOf: Record<RevisionEventType, { who: readonly Rule[]; what: readonly 
   closeRemark: { who: [holds('reviewer', 'designer', 'releaseAuthority')], what: [remarkIsOpen] },
   approve: { who: [holds('reviewer'), notOwnWork, notYetApproved], what: [blockingClosed] },
   requestChanges: { who: [holds('reviewer', 'releaseAuthority'), notOwnWork], what: [] },
-  rework: { who: [holds('designer')], what: [] },
+  rework: { who: [holds('designer')], what: [notContinued] },
   startRun: { who: [holds('bench')], what: [] },
   stopRun: { who: [holds('bench')], what: [] },
   signResult: { who: [holds('bench')], what: [everyReadingTaken, resultFollowsReadings] },

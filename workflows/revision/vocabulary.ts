@@ -131,5 +131,7 @@ export const RevisionFacts = z.strictObject({
   concessionGranted: z.boolean(),
   /** Letter of a later released revision of the same design, which may supersede this one. */
   laterReleased: z.string().nullable(),
+  /** Letter of the revision drafted from this one and not abandoned. */
+  continuedAs: z.string().nullable(),
 });
 export type RevisionFacts = z.infer<typeof RevisionFacts>;
