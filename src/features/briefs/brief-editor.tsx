@@ -1,0 +1,125 @@
+import { useCallback, useId, useState } from 'react';
+import type { ReactNode } from 'react';
+import type { Brief, BriefDocument } from '#contracts/briefs';
+import type { Change } from '#contracts/error';
+import { formatAgo } from '../../lib/format';
+import { isRequestError, RequestError } from '../../lib/request-error';
+import { Button } from '../../ui/button';
+import { Caution } from '../../ui/caution';
+import { applyIssues } from '../../ui/form';
+import { PageBody } from '../../ui/page-header';
+import { briefFieldName, readBrief } from './brief-document';
+import { briefFields, emptyBrief } from './brief-fields';
+import type { BriefFields } from './brief-fields';
+import { BriefForm, useBriefForm } from './brief-form';
+import { useKeptDraft } from './kept-draft';
+
+interface BriefEditorProps {
+  /** The brief that is changed; null for a new one. */
+  brief: Brief | null;
+  /** Draws the head of the page around the button that saves. */
+  header: (save: ReactNode) => ReactNode;
+  saveLabel: string;
+  /** Saves; `version` is the one that the text was written on. */
+  save: (document: BriefDocument, version: number | null) => Promise<Brief>;
+  onSaved: (brief: Brief) => void;
+}
+
+/** Writing or changing a brief: keeps the text while it is written, puts what is wrong at its field, never overwrites. */
+export function BriefEditor({ brief, header, saveLabel, save, onSaved }: BriefEditorProps) {
+  const formId = useId();
+  const draft = useKeptDraft<BriefFields>(brief?.id ?? 'new', brief?.version ?? null);
+  const [base, setBase] = useState(draft.found?.version ?? brief?.version ?? null);
+  const [restored, setRestored] = useState(draft.found !== null);
+  const [changed, setChanged] = useState<Change[] | null>(null);
+  const saved = brief === null ? emptyBrief : () => briefFields(brief.document);
+  const [initial] = useState(() => (draft.found === null ? saved() : { ...saved(), ...draft.found.values }));
+  const { keep, forget } = draft;
+  const form = useBriefForm(initial, useCallback((values) => keep(values), [keep]));
+
+  const send = (version: number | null) =>
+    form.handleSubmit(async (fields) => {
+      const reading = await readBrief(fields);
+      if (!reading.ok) {
+        applyIssues(form, new RequestError(422, 'invalid', 'The brief is not complete.', { issues: reading.issues }));
+        return;
+      }
+      try {
+        const answer = await save(reading.document, version);
+        forget();
+        onSaved(answer);
+      } catch (error) {
+        if (isRequestError(error, 'conflict')) setChanged(error.changed);
+        else applyIssues(form, error, { rename: (path) => briefFieldName(path, fields.vibration.kind) });
+      }
+    });
+
+  const startAgain = () => {
+    forget();
+    form.reset(saved());
+    setRestored(false);
+    setChanged(null);
+    setBase(brief?.version ?? null);
+  };
+
+  return (
+    <>
+      {header(
+        <Button variant="primary" type="submit" form={formId} pending={form.formState.isSubmitting} disabled={changed !== null}>
+          {saveLabel}
+        </Button>,
+      )}
+      <PageBody className="flex flex-col gap-5">
+        {restored && draft.found ? (
+          <Caution severity="info" title="Text that was not saved is shown." className="max-w-5xl">
+            It was written on this device {formatAgo(draft.found.at)}.{' '}
+            <Button size="small" onPress={startAgain}>
+              Discard it
+            </Button>
+          </Caution>
+        ) : null}
+        {changed !== null && brief !== null ? (
+          <StaleBrief
+            changed={changed}
+            brief={brief}
+            onMine={() => {
+              setBase(brief.version);
+              setChanged(null);
+              void send(brief.version)();
+            }}
+            onTheirs={startAgain}
+          />
+        ) : null}
+        <BriefForm id={formId} form={form} onSubmit={() => void send(base)()} />
+      </PageBody>
+    </>
+  );
+}
+
+interface StaleBriefProps {
+  changed: readonly Change[];
+  brief: Brief;
+  onMine: () => void;
+  onTheirs: () => void;
+}
+
+/** Somebody saved in the meantime: says what, and asks whose text is to hold. */
+function StaleBrief({ changed, brief, onMine, onTheirs }: StaleBriefProps) {
+  return (
+    <div role="alert" className="flex max-w-5xl flex-col items-start gap-2 border-l-4 border-amber bg-wash px-4 py-3">
+      <h2>Somebody changed this brief while you wrote</h2>
+      <ul className="list-disc pl-5">
+        {changed.map((change) => (
+          <li key={`${change.version} ${change.at}`}>
+            {change.what} <span className="text-graphite">({change.by ?? 'the server'}, {formatAgo(change.at)})</span>
+          </li>
+        ))}
+      </ul>
+      <p>Nothing was saved; your text is kept below. The brief is now at version {brief.version}.</p>
+      <div className="flex flex-wrap gap-2">
+        <Button onPress={onMine}>Save mine over it</Button>
+        <Button onPress={onTheirs}>Discard mine and load theirs</Button>
+      </div>
+    </div>
+  );
+}
