@@ -10,6 +10,8 @@ export interface DocumentIssue {
   readonly message: string;
   /** The limit that was passed, SI (°C, rad); absent where none is involved. */
   readonly limit?: number;
+  /** Which of the documents, where two were read together. */
+  readonly document?: 'design' | 'vibration';
 }
 
 /** Thrown for a document that cannot be computed; `issues` has at least one entry. */

@@ -34,22 +34,6 @@ export function broadbandBound(mass: number, density: number): number {
   return (mass * density) / 4;
 }
 
-/**
- * One-sided density at a frequency of points joined by straight lines on log-log paper; zero outside them.
- *
- * @param points [Hz, (m/s²)²/Hz], rising
- */
-export function densityAt(points: readonly (readonly [number, number])[], frequency: number): number {
-  for (let index = 1; index < points.length; index += 1) {
-    const [f0, g0] = points[index - 1] ?? [0, 0];
-    const [f1, g1] = points[index] ?? [0, 0];
-    if (frequency < f0 || frequency > f1) continue;
-    if (g0 === g1) return g0;
-    return g0 * (frequency / f0) ** (Math.log(g1 / g0) / Math.log(f1 / f0));
-  }
-  return 0;
-}
-
 /** Best resistive load at resonance without inductance, and the power there. */
 export interface BestLoad {
   /** Ω */
