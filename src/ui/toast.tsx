@@ -1,5 +1,4 @@
-import { Toaster, toast } from 'sonner';
-import { useTheme } from '../lib/theme';
+import { lazy, Suspense } from 'react';
 
 interface TellOptions {
   detail?: string;
@@ -8,12 +7,15 @@ interface TellOptions {
 
 const show =
   (kind: 'success' | 'error' | 'info', duration: number) =>
-  (message: string, options: TellOptions = {}) => {
-    toast[kind](message, {
-      duration,
-      description: options.detail,
-      ...(options.action ? { action: { label: options.action.label, onClick: options.action.onPress } } : {}),
-    });
+  (message: string, options: TellOptions = {}): void => {
+    // Fetched on the first message: nothing on a page waits for it.
+    void import('sonner').then(({ toast }) =>
+      toast[kind](message, {
+        duration,
+        description: options.detail,
+        ...(options.action ? { action: { label: options.action.label, onClick: options.action.onPress } } : {}),
+      }),
+    );
   };
 
 /** Short words about something done, at the edge of the page. Errors that need an answer belong where they happened. */
@@ -23,27 +25,11 @@ export const tell = {
   failed: show('error', 10_000),
 };
 
-const tones = '!border-l-4';
+const ToastRegion = lazy(() => import('./toast-region'));
 
-export function Toasts() {
-  const { theme } = useTheme();
-  return (
-    <Toaster
-      theme={theme}
-      position="bottom-right"
-      closeButton
-      containerAriaLabel="Messages"
-      toastOptions={{
-        classNames: {
-          toast: '!bg-sheet !text-ink !border-rule !font-sans !rounded-md !shadow-(--lift) !text-[1rem]',
-          description: '!text-graphite',
-          success: `${tones} !border-l-verdigris`,
-          error: `${tones} !border-l-cinnabar`,
-          info: `${tones} !border-l-graphite`,
-          actionButton: '!bg-copper !text-on-copper',
-          closeButton: '!bg-sheet !text-ink !border-rule',
-        },
-      }}
-    />
-  );
-}
+/** Where messages appear; once, at the root. */
+export const Toasts = () => (
+  <Suspense fallback={null}>
+    <ToastRegion />
+  </Suspense>
+);

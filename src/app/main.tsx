@@ -1,0 +1,17 @@
+import { StrictMode } from 'react';
+import { createRoot } from 'react-dom/client';
+import { RouterProvider } from 'react-router-dom';
+import { Providers } from './providers';
+import { router } from './router';
+import './styles.css';
+
+const root = document.getElementById('root');
+if (!root) throw new Error('index.html has no element with the id “root”.');
+
+createRoot(root).render(
+  <StrictMode>
+    <Providers>
+      <RouterProvider router={router} />
+    </Providers>
+  </StrictMode>,
+);
