@@ -76,14 +76,21 @@ function readJsonFile(file: string, path: string): unknown {
   return parseJson(text, path);
 }
 
+function issuesFrom(error: unknown): readonly DocumentIssue[] {
+  if (error instanceof DocumentError) return error.issues;
+  if (error instanceof BadRequest) return [error.issue];
+  // A defect of the program: told on the error channel in full, and it must not take the other lines along
+  console.error(error);
+  const message = `could not be computed: ${error instanceof Error ? error.message : String(error)}`;
+  return [{ path: '', value: null, message }];
+}
+
 /** The answer to one request: the estimate, or what is wrong with the request. */
 function answer(compute: () => unknown): { text: string; ok: boolean } {
   try {
     return { text: JSON.stringify(compute()), ok: true };
   } catch (error) {
-    const issues = error instanceof DocumentError ? error.issues : error instanceof BadRequest ? [error.issue] : null;
-    if (issues === null) throw error;
-    return { text: JSON.stringify({ errors: issues }), ok: false };
+    return { text: JSON.stringify({ errors: issuesFrom(error) }), ok: false };
   }
 }
 
