@@ -5,7 +5,8 @@ import { MAGNETIC_CONSTANT } from '../../server/physics/models/constants';
 import { couplingOfDevice, couplingTable } from '../../server/physics/models/coupling';
 import type { MagneticDesign } from '../../server/physics/models/coupling';
 import { axialLinkage } from '../../server/physics/models/through-coupling';
-import type { AxialCoil, AxialMagnet } from '../../server/physics/models/through-coupling';
+import type { AxialMagnet } from '../../server/physics/models/axial-magnet';
+import type { AxialCoil } from '../../server/physics/models/through-coupling';
 import {
   errorToPeak,
   expectedOf,

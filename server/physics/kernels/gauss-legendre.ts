@@ -25,7 +25,6 @@ export function gaussLegendre(n: number): QuadratureRule {
   const weights = new Float64Array(n);
   for (let i = 0; i < (n + 1) >> 1; i++) {
     let x = Math.cos((Math.PI * (i + 0.75)) / (n + 0.5));
-    let slope = 1;
     for (let step = 0; step < 20; step++) {
       let below = 1;
       let value = x;
@@ -34,7 +33,7 @@ export function gaussLegendre(n: number): QuadratureRule {
         below = value;
         value = next;
       }
-      slope = (n * (below - x * value)) / ((1 - x) * (1 + x));
+      const slope = (n * (below - x * value)) / ((1 - x) * (1 + x));
       const move = value / slope;
       x -= move;
       if (Math.abs(move) < 1e-15) break;

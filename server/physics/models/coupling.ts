@@ -1,12 +1,12 @@
 import { hermiteTable } from '../kernels/hermite-table';
 import { monotoneCubic, monotoneCubicAt, monotoneCubicSlopeAt } from '../kernels/pchip';
+import { axialMagnetsOf } from './axial-magnet';
 import type { CoilShape } from './coil';
 import { LINKAGE_TERMS } from './linkage';
 import type { Linkage } from './linkage';
-import type { CylinderMagnet, Magnet } from './magnet';
-import { magnetisationOf } from './magnetisation';
+import type { Magnet } from './magnet';
 import { axialLinkage } from './through-coupling';
-import type { AxialCoil, AxialMagnet } from './through-coupling';
+import type { AxialCoil } from './through-coupling';
 
 /** Flux linkage (V·s) and coupling θ = dλ/dx (V·s/m) at the positions asked for. */
 export interface CouplingCurve {
@@ -45,25 +45,8 @@ const TABLE_TOLERANCE = 1e-9;
  * @throws RangeError where the layout does not take the shape of a magnet or coil
  */
 export function linkageOfDesign(design: MagneticDesign): Linkage {
-  return axialLinkage(axialMagnetsOf(design), axialCoilsOf(design));
-}
-
-function axialMagnetsOf(design: MagneticDesign): AxialMagnet[] {
-  return design.magnets.map((magnet, i) => {
-    if (magnet.shape !== 'cylinder') throw new RangeError(`magnets.${i}.shape must be cylinder in the through layout`);
-    return axialMagnet(magnet, magnetisationOf(magnet, design.temperature, design.recoil ?? true));
-  });
-}
-
-/** A cylinder or ring of the document with its magnetisation (A/m, signed). */
-export function axialMagnet(magnet: CylinderMagnet, magnetisation: number): AxialMagnet {
-  return {
-    outerRadius: magnet.outerDiameter / 2,
-    innerRadius: magnet.innerDiameter / 2,
-    length: magnet.length,
-    at: magnet.at,
-    magnetisation,
-  };
+  const magnets = axialMagnetsOf(design.magnets, 'magnets', design.temperature, design.recoil ?? true);
+  return axialLinkage(magnets, axialCoilsOf(design));
 }
 
 function axialCoilsOf(design: MagneticDesign): AxialCoil[] {

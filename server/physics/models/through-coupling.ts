@@ -1,19 +1,9 @@
 import { gradedRule } from '../kernels/graded-rule';
 import type { QuadratureRule } from '../kernels/gauss-legendre';
+import { sheetsOf } from './axial-magnet';
+import type { AxialMagnet } from './axial-magnet';
 import { addCoaxialCircles, CIRCLE_TERMS } from './coaxial-circles';
 import type { Linkage } from './linkage';
-
-/** A cylinder or ring, magnetised along the axis, as the current sheets on its mantle surfaces. */
-export interface AxialMagnet {
-  readonly outerRadius: number;
-  /** Zero for a solid cylinder. */
-  readonly innerRadius: number;
-  readonly length: number;
-  /** Centre on the axis (m). */
-  readonly at: number;
-  /** Magnetisation along +x, signed (A/m): the sheet current per length of axis. */
-  readonly magnetisation: number;
-}
 
 /** A round coil on the axis; turns spread evenly over the window. */
 export interface AxialCoil {
@@ -103,15 +93,6 @@ function groupEdges(magnets: readonly AxialMagnet[], coils: readonly AxialCoil[]
       weight: Float64Array.from(kept, ([, weight]) => weight),
     };
   });
-}
-
-function sheetsOf(magnet: AxialMagnet): [number, number][] {
-  return magnet.innerRadius > 0
-    ? [
-        [magnet.outerRadius, 1],
-        [magnet.innerRadius, -1],
-      ]
-    : [[magnet.outerRadius, 1]];
 }
 
 /** The four ends of the second difference of G, those that coincide up to rounding merged. */
