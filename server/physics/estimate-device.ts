@@ -4,6 +4,7 @@ import { likelyExcursion } from './estimate-vibration';
 import { constantCoupling, measuredCoupling, tableOfLinkage, linkageOfDesign } from './models/coupling';
 import type { CouplingTable } from './models/coupling';
 import type { Circuit, Device, Diode, Vibration } from './models/device';
+import { fitIssues } from './models/fit-check';
 import type { Linkage } from './models/linkage';
 import { volumeOf } from './models/magnetisation';
 import { NoRestError, springSuspension } from './models/suspension';
@@ -51,7 +52,9 @@ function restingSuspension(document: DesignDocument, mass: number): RestingSuspe
     }
   } catch (error) {
     if (!(error instanceof NoRestError)) throw error;
-    throw new DocumentError([{ path: 'suspension', value: suspension.kind, message: error.message }]);
+    throw new DocumentError([
+      { path: 'suspension', value: suspension.kind, message: error.message, document: 'design' },
+    ]);
   }
 }
 
@@ -146,7 +149,7 @@ function couplingOf(document: DesignDocument, linkage: Linkage | null, from: num
  * Puts a device together from its document.
  *
  * @param coilResistance, coilInductance of all coils in series, as computed or measured (Ω, H)
- * @throws DocumentError where the device has no stable rest position
+ * @throws DocumentError where the parts do not fit, or the device has no stable rest position
  */
 export function prepareDevice(
   document: DesignDocument,
@@ -156,6 +159,8 @@ export function prepareDevice(
 ): PreparedDevice {
   const mass = movingMassOf(document);
   const rest = restingSuspension(document, mass);
+  const misfits = fitIssues(document, rest.restPosition);
+  if (misfits.length > 0) throw new DocumentError(misfits.map((issue) => ({ ...issue, document: 'design' })));
   const damping = dampingOf(document, rest.stiffness, mass);
   const linkage = document.asMeasured.coupling === null ? linkageOfDesign(document) : null;
   const reach = couplingReach(document, rest.restPosition);

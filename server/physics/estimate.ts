@@ -10,7 +10,6 @@ import { magnetMass, prepareDevice } from './estimate-device';
 import type { Estimate } from './estimate-shape';
 import { vibrationOf } from './estimate-vibration';
 import { cautionsOf } from './models/cautions';
-import { fitIssues } from './models/fit-check';
 import { respond } from './models/response';
 import { windingsOf } from './models/winding';
 import type { Windings } from './models/winding';
@@ -83,9 +82,6 @@ export function estimateCanonical(
   const resistance = design.asMeasured.coilResistance ?? windings.resistance;
   const inductance = design.asMeasured.coilInductance ?? 0;
   const prepared = prepareDevice(design, vibration, resistance, inductance);
-  const misfits = fitIssues(design, prepared.rest.restPosition);
-  if (misfits.length > 0) throw new DocumentError(misfits.map((issue) => ({ ...issue, document: 'design' })));
-
   const answer = respond(prepared.device, vibration);
   const notes = [...answer.notes];
   const curve = curveOf(

@@ -352,7 +352,7 @@ export const dimensions = {
   volume: { phrase: 'a volume', exponents: [3, 0, 0, 0, 0, 0], unit: 'm³', examples: ['12 cm^3', '1.2e-5 m^3'] },
   powerDensity: {
     phrase: 'a normalised power density',
-    exponents: [-5, 1, 1, 0, 0, 0],
+    exponents: [-3, 1, 1, 0, 0, 0],
     unit: 'kg s/m³',
     examples: ['700 kg*s/m^3'],
   },
