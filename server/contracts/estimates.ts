@@ -92,6 +92,8 @@ export const EstimateRequest = z.strictObject({
   vibration: z.unknown(),
   positions: z.array(z.number()).max(2001).optional(),
   quietArrays: z.boolean().optional(),
+  /** Coldest and hottest temperature of the brief, °C: the magnets are checked there too. */
+  temperatureRange: z.strictObject({ coldest: z.number(), hottest: z.number() }).optional(),
 });
 export type EstimateRequest = z.infer<typeof EstimateRequest>;
 

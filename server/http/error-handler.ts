@@ -65,6 +65,8 @@ function known(error: unknown): DomainError | null {
 
 /** Every error ends here: a known one is told in full; anything else is a bug, logged, and told without particulars. */
 export const errorHandler: ErrorRequestHandler = (error: unknown, request, response, next) => {
+  // The caller has gone away and took the work along: nobody is left to be told.
+  if (response.destroyed && error instanceof Error && error.name === 'AbortError') return;
   if (response.headersSent) {
     next(error);
     return;

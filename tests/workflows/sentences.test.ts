@@ -22,8 +22,8 @@ const approve = { type: 'approve' } as const;
 const release = { type: 'release' } as const;
 const blocking = { openBlockingRemarks: 1, openRemarkIds: ['r1'] };
 const running = { openRunId: 'run', openRunStartedBy: 'bench' };
-const evidence = { approvedBy: ['reviewer'], lastResult: 'conforming' } as const;
-const startRun = { type: 'startRun', runId: 'run', missingReadings: ['Power into the load'] } as const;
+const evidence: Partial<RevisionFacts> = { approvedBy: ['reviewer'], lastResult: 'conforming' };
+const startRun: Without<RevisionEvent> = { type: 'startRun', runId: 'run', missingReadings: ['Power into the load'] };
 const conforming = { type: 'signResult', result: 'conforming' } as const;
 const nonconforming = { type: 'signResult', result: 'nonconforming' } as const;
 

@@ -1,0 +1,2 @@
+export { calibrationHolds, loadInstrument } from './store';
+export type { InstrumentRow } from './store';
