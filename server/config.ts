@@ -16,7 +16,7 @@ export interface Config {
   /** The built client: index.html and assets/. */
   clientDir: string;
   sessionSecret: string;
-  /** People come by https: cookies are Secure and browsers are told to stay with it. */
+  /** People come by https, as they do behind a trusted proxy unless TLS=false: cookies are Secure and browsers are told to stay with it. */
   tls: boolean;
   /** How many proxies in front are trusted to tell the caller's address. */
   trustedProxies: number;
@@ -49,7 +49,7 @@ const Environment = z
     BASE_URL: z.url({ protocol: /^https?$/, error: 'Give an http or https address.' }).optional(),
     DATA_DIR: text.min(1).default('data'),
     SESSION_SECRET: z.string().min(32, 'At least 32 characters.').optional(),
-    TLS: yesOrNo.default(false),
+    TLS: yesOrNo.optional(),
     TRUST_PROXY: z.coerce.number('Give the number of proxies in front.').int().min(0).max(10).default(0),
     SMTP_URL: z.url({ protocol: /^smtps?$/, error: 'Give an smtp: or smtps: address.' }).optional(),
     MAIL_FROM: text
@@ -58,9 +58,13 @@ const Environment = z
       .optional(),
     LOG_LEVEL: z.enum(['silent', 'fatal', 'error', 'warn', 'info', 'debug', 'trace']).default('info'),
   })
-  .refine(({ TLS, TRUST_PROXY }) => !TLS || TRUST_PROXY > 0, {
+  .refine(({ TLS, TRUST_PROXY }) => TLS !== true || TRUST_PROXY > 0, {
     path: ['TRUST_PROXY'],
     message: 'TLS=true needs the proxy that ends TLS: give the number of proxies in front, usually 1.',
+  })
+  .refine(({ BASE_URL, TRUST_PROXY }) => BASE_URL?.startsWith('https:') !== true || TRUST_PROXY > 0, {
+    path: ['TRUST_PROXY'],
+    message: 'An https address needs the proxy that ends TLS: give the number of proxies in front, usually 1.',
   });
 
 export class ConfigError extends Error {
@@ -75,6 +79,12 @@ function keptSecret(dataDir: string): string {
   const secret = randomBytes(32).toString('hex');
   writeFileSync(file, `${secret}\n`, { mode: 0o600, flag: 'wx' });
   return secret;
+}
+
+/** A name that can stand in an address: not that of this very machine. */
+function mailHost(baseUrl: string): string {
+  const { hostname } = new URL(baseUrl);
+  return /^[\d.]+$|^\[|^localhost$/.test(hostname) ? 'localhost.example' : hostname;
 }
 
 /**
@@ -104,11 +114,11 @@ export function loadConfig(environment: NodeJS.ProcessEnv): Config {
     databaseFile: join(dataDir, 'tremolode.sqlite'),
     clientDir: join(root, 'dist', 'client'),
     sessionSecret: env.SESSION_SECRET ?? keptSecret(dataDir),
-    tls: env.TLS,
+    tls: env.TLS ?? env.TRUST_PROXY > 0,
     trustedProxies: env.TRUST_PROXY,
     mail: {
       smtpUrl: env.SMTP_URL ?? null,
-      from: env.MAIL_FROM ?? `Tremolode <tremolode@${new URL(baseUrl).hostname}>`,
+      from: env.MAIL_FROM ?? `Tremolode <tremolode@${mailHost(baseUrl)}>`,
     },
     logLevel: env.LOG_LEVEL,
     version,

@@ -7,5 +7,5 @@ export const systemHandlers = ({ db, config, estimator }: Deps): Pick<Handlers, 
     await db.raw('SELECT 1');
     return { ok: true, version: config.version, engine: estimator.engine };
   },
-  readOpenApi: () => Promise.resolve({ ...openApi(config.version) }),
+  readOpenApi: () => Promise.resolve(openApi(config.version)),
 });

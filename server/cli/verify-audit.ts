@@ -1,0 +1,13 @@
+import { verifyAudit } from '../audit';
+import { loadConfig } from '../config';
+import { openDatabase } from '../db';
+
+const db = openDatabase(loadConfig(process.env).databaseFile);
+const { intact, entries, firstFault, lastHash } = await verifyAudit(db).finally(() => db.destroy());
+if (firstFault !== null) console.error(`Entry ${firstFault.sequence}: ${firstFault.what}`);
+console.log(
+  intact
+    ? `The audit trail is intact: ${entries} entries, last hash ${lastHash ?? 'none'}.`
+    : `The audit trail is NOT intact; ${entries} entries before the first fault are.`,
+);
+process.exitCode = intact ? 0 : 1;
