@@ -5,6 +5,7 @@ import type { CoilShape } from './coil';
 import { LINKAGE_TERMS } from './linkage';
 import type { Linkage } from './linkage';
 import type { Magnet } from './magnet';
+import { misalignedLinkage } from './misalignment';
 import { axialLinkage } from './through-coupling';
 import type { AxialCoil } from './through-coupling';
 
@@ -46,7 +47,11 @@ const TABLE_TOLERANCE = 1e-9;
  */
 export function linkageOfDesign(design: MagneticDesign): Linkage {
   const magnets = axialMagnetsOf(design.magnets, 'magnets', design.temperature, design.recoil ?? true);
-  return axialLinkage(magnets, axialCoilsOf(design));
+  const coils = axialCoilsOf(design);
+  const misalignment = design.misalignment;
+  return misalignment && (misalignment.offset !== 0 || misalignment.tilt !== 0)
+    ? misalignedLinkage(magnets, coils, misalignment)
+    : axialLinkage(magnets, coils);
 }
 
 function axialCoilsOf(design: MagneticDesign): AxialCoil[] {
