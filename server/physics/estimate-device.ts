@@ -1,4 +1,4 @@
-import type { DesignDocument } from './design-document';
+import type { CylinderMagnet, DesignDocument } from './design-document';
 import { DocumentError } from './document-error';
 import { likelyExcursion } from './estimate-vibration';
 import { constantCoupling, measuredCoupling, tableOfLinkage, linkageOfDesign } from './models/coupling';
@@ -6,6 +6,11 @@ import type { CouplingTable } from './models/coupling';
 import type { Circuit, Device, Diode, Vibration } from './models/device';
 import { fitIssues } from './models/fit-check';
 import type { Linkage } from './models/linkage';
+import { suspensionOnCurve, tabulatedForce } from './models/force-curve';
+import { movingSpringMass, springRate } from './models/helical-spring';
+import { inductanceOfCoils } from './models/inductance';
+import { levitationOfDesign } from './models/levitation';
+import type { Levitation } from './models/levitation';
 import { volumeOf } from './models/magnetisation';
 import { NoRestError, springSuspension } from './models/suspension';
 import type { RestingSuspension } from './models/suspension';
@@ -24,36 +29,57 @@ export function magnetMass(document: DesignDocument): number {
 export function movingMassOf(document: DesignDocument): number {
   const own =
     'total' in document.movingMass ? document.movingMass.total : document.movingMass.added + magnetMass(document);
-  return own + springMassOf(document) / 3;
+  const { suspension } = document;
+  return suspension.kind === 'helical' ? own + movingSpringMass(suspension, suspension.springs) : own;
 }
 
-/** Active wire of the helical springs, kg; zero for other suspensions. */
-function springMassOf(document: DesignDocument): number {
-  const { suspension } = document;
-  if (suspension.kind !== 'helical') return 0;
-  const { wireDiameter, meanDiameter, activeTurns, density, springs } = suspension;
-  return springs * density * ((Math.PI * wireDiameter ** 2) / 4) * Math.PI * meanDiameter * activeTurns;
+/** Rest between fixed magnets, in the shape of the other suspensions. */
+function levitatedSuspension(
+  document: DesignDocument,
+  fixed: readonly CylinderMagnet[],
+  mass: number,
+): RestingSuspension {
+  let found: Levitation;
+  try {
+    found = levitationOfDesign(document, fixed, mass);
+  } catch (error) {
+    // The model's word for a moving magnet that stands in a fixed one
+    if (error instanceof RangeError) throw new NoRestError(error.message);
+    throw error;
+  }
+  if (!found.found) throw new NoRestError(found.reason);
+  return {
+    restPosition: found.rest.position,
+    stiffness: found.rest.stiffness,
+    cubic: found.rest.cubic,
+    suspension: found.suspension,
+  };
+}
+
+function suspensionOf(document: DesignDocument, mass: number): RestingSuspension {
+  const { suspension, axisAngle } = document;
+  switch (suspension.kind) {
+    case 'spring':
+      return springSuspension(suspension, mass, axisAngle);
+    case 'helical': {
+      const stiffness = suspension.springs * springRate(suspension);
+      return springSuspension({ stiffness, cubic: 0, neutralAt: suspension.neutralAt }, mass, axisAngle);
+    }
+    case 'table':
+      return suspensionOnCurve(tabulatedForce(suspension.displacement, suspension.force), mass, axisAngle);
+    case 'levitated':
+      return levitatedSuspension(document, suspension.fixed, mass);
+  }
 }
 
 /** The suspension at its rest position under gravity; a device without a stable one is a bad document. */
 function restingSuspension(document: DesignDocument, mass: number): RestingSuspension {
-  const { suspension, axisAngle } = document;
   try {
-    switch (suspension.kind) {
-      case 'spring':
-        return springSuspension(suspension, mass, axisAngle);
-      case 'helical': {
-        const { wireDiameter: d, meanDiameter: D, activeTurns, shearModulus, springs, neutralAt } = suspension;
-        const stiffness = (springs * shearModulus * d ** 4) / (8 * D ** 3 * activeTurns);
-        return springSuspension({ stiffness, cubic: 0, neutralAt }, mass, axisAngle);
-      }
-      default:
-        throw new NoRestError(`There is no method yet for a suspension of kind ${suspension.kind}.`);
-    }
+    return suspensionOf(document, mass);
   } catch (error) {
     if (!(error instanceof NoRestError)) throw error;
     throw new DocumentError([
-      { path: 'suspension', value: suspension.kind, message: error.message, document: 'design' },
+      { path: 'suspension', value: document.suspension.kind, message: error.message, document: 'design' },
     ]);
   }
 }
@@ -148,15 +174,10 @@ function couplingOf(document: DesignDocument, linkage: Linkage | null, from: num
 /**
  * Puts a device together from its document.
  *
- * @param coilResistance, coilInductance of all coils in series, as computed or measured (Ω, H)
+ * @param coilResistance of all coils in series, as computed or measured (Ω)
  * @throws DocumentError where the parts do not fit, or the device has no stable rest position
  */
-export function prepareDevice(
-  document: DesignDocument,
-  vibration: Vibration,
-  coilResistance: number,
-  coilInductance: number,
-): PreparedDevice {
+export function prepareDevice(document: DesignDocument, vibration: Vibration, coilResistance: number): PreparedDevice {
   const mass = movingMassOf(document);
   const rest = restingSuspension(document, mass);
   const misfits = fitIssues(document, rest.restPosition);
@@ -176,7 +197,7 @@ export function prepareDevice(
       stops: document.stops,
       coupling: couplingOf(document, linkage, rest.restPosition - half, rest.restPosition + half),
       coilResistance,
-      coilInductance,
+      coilInductance: document.asMeasured.coilInductance ?? inductanceOfCoils(document),
       circuit: circuitOf(document.circuit),
     },
     rest,

@@ -80,8 +80,7 @@ export function estimateCanonical(
   const vibration = vibrationOf(vibrationDocument);
   const windings = windingsOf(design.coils, design.conductivity, design.temperature);
   const resistance = design.asMeasured.coilResistance ?? windings.resistance;
-  const inductance = design.asMeasured.coilInductance ?? 0;
-  const prepared = prepareDevice(design, vibration, resistance, inductance);
+  const prepared = prepareDevice(design, vibration, resistance);
   const answer = respond(prepared.device, vibration);
   const notes = [...answer.notes];
   const curve = curveOf(
@@ -110,7 +109,7 @@ export function estimateCanonical(
     digest: digestOfInputs(design, vibrationDocument),
     coil: {
       resistance,
-      inductance,
+      inductance: prepared.device.coilInductance,
       wireLength: windings.wireLength,
       fillFactor: windings.fillFactor,
       copperMass: windings.copperMass,
