@@ -42,11 +42,11 @@ export function ActionButton({ whyNot, reason = 'beneath', onPress, className, t
       </>
     );
   return (
-    <span className="inline-flex max-w-72 flex-col gap-1">
+    <div className="inline-flex max-w-72 flex-col items-start gap-1">
       {button}
       <span id={reasonId} className="text-sm leading-snug text-graphite">
         {whyNot}
       </span>
-    </span>
+    </div>
   );
 }

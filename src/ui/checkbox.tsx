@@ -29,7 +29,7 @@ export function Checkbox({
   const id = useId();
   return (
     <div className={className}>
-      <label className="flex w-fit cursor-pointer items-start gap-2 py-0.5 leading-snug">
+      <label className="flex w-fit cursor-pointer items-start gap-2 py-1 leading-snug">
         <input
           type="checkbox"
           className={box}

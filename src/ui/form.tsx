@@ -149,7 +149,9 @@ export function FieldGroup({ title, aside, children, className }: FieldGroupProp
   return (
     <section aria-labelledby={id} className={classNames('flex flex-col gap-1.5 border-b border-rule pb-4', className)}>
       <div className="flex items-baseline justify-between gap-3 pb-1">
-        <h3 id={id}>{title}</h3>
+        <h2 id={id} className="text-base">
+          {title}
+        </h2>
         {aside ? <div className="text-sm text-graphite">{aside}</div> : null}
       </div>
       {children}

@@ -58,7 +58,11 @@ export function PageHeader({ title, crumbs, meta, actions, documentTitle }: Page
         <h1 className="wrap-anywhere">{title}</h1>
         {meta ? <div className="mt-1 flex flex-wrap items-center gap-x-4 gap-y-1 text-graphite">{meta}</div> : null}
       </div>
-      {actions ? <div className="flex flex-wrap items-start gap-2.5 sm:items-center">{actions}</div> : null}
+      {actions ? (
+        <div className="flex flex-wrap items-start gap-2.5 *:[span]:flex *:[span]:min-h-9.5 *:[span]:items-center">
+          {actions}
+        </div>
+      ) : null}
     </header>
   );
 }

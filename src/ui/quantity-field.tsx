@@ -111,7 +111,14 @@ export function QuantityField(props: QuantityFieldProps) {
   const understood =
     reading?.ok === true && !evident ? understoodWords(value, reading.value, dimension, unit) : undefined;
   const meaning =
-    understood ?? (value.trim() === '' ? source : editing && unreadable ? 'not understood yet' : undefined);
+    understood ??
+    (value.trim() === ''
+      ? source
+      : reading === null
+        ? 'working it out …'
+        : editing && unreadable
+          ? 'not understood yet'
+          : undefined);
   const hasOwnUnit = reading?.ok === true && !plain.test(value.trim());
   return (
     <Field

@@ -50,7 +50,7 @@ export function Figure({ number, unit, after, className }: FigureProps) {
   return (
     <span className={classNames('whitespace-nowrap', className)}>
       <span className="font-mono">{number}</span>
-      {unit ? <span className="font-normal text-graphite">{unit === '°' ? '°' : `\u202F${unit}`}</span> : null}
+      {unit ? <span className="font-normal text-graphite">{unit === '°' ? '°' : `\u00A0${unit}`}</span> : null}
       {after ? <span className="font-normal text-graphite"> {after}</span> : null}
     </span>
   );

@@ -20,7 +20,7 @@ export function RadioGroup<T extends string>(props: RadioGroupProps<T>) {
       {() => (
         <div className={classNames('flex', direction === 'down' ? 'flex-col' : 'flex-wrap gap-x-5')}>
           {choices.map((choice, index) => (
-            <label key={choice.value} className="flex w-fit cursor-pointer items-start gap-2 py-0.5 leading-snug">
+            <label key={choice.value} className="flex w-fit cursor-pointer items-start gap-2 py-1 leading-snug">
               <input
                 type="radio"
                 className="mt-[0.2em] size-[1.05em] shrink-0 accent-copper"
