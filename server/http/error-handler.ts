@@ -26,10 +26,8 @@ function unreadableBody(error: unknown): DomainError | null {
   if (!read.success) return null;
   const fault = (issue: Issue, message: string) => invalid([issue], message);
   switch (read.data.type) {
-    case 'entity.parse.failed': {
-      const { message, limit } = placeInJson(read.data.message, read.data.body ?? '');
-      return fault({ path: '', message, limit }, 'What was sent is not valid JSON.');
-    }
+    case 'entity.parse.failed':
+      return fault({ path: '', message: placeInJson(read.data.body ?? '') }, 'What was sent is not valid JSON.');
     case 'entity.too.large':
       return fault(
         { path: '', message: `At most ${bodyLimit.words}.`, limit: bodyLimit.words },

@@ -31,7 +31,8 @@ export function plainWords(issue: RawIssue): string | undefined {
   switch (issue.code) {
     case 'invalid_type':
       if (issue.input === undefined) return 'This is missing.';
-      if (issue.expected === 'number' && typeof issue.input === 'number') return 'This is not a finite number.';
+      if (issue.expected === 'number' && (issue.input === Infinity || issue.input === -Infinity))
+        return 'This is not a finite number.';
       return `This must be ${noun(issue.expected)}.`;
     case 'too_small':
       return `${issue.inclusive === false ? 'More than' : 'At least'} ${String(issue.minimum)}${countable[issue.origin] ?? ''}.`;
@@ -62,7 +63,7 @@ function shown(input: unknown, path: PropertyKey[]): unknown {
     value = (value as Record<PropertyKey, unknown>)[step];
   }
   if (typeof value === 'string') return value.length > longestShown ? `${value.slice(0, longestShown)}…` : value;
-  return typeof value === 'object' ? undefined : value;
+  return typeof value === 'object' && value !== null ? undefined : value;
 }
 
 function limitOf(issue: z.core.$ZodIssue): string | number | undefined {

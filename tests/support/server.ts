@@ -85,6 +85,7 @@ async function agentFor(app: Express): Promise<TestAgent> {
     put: (path, body) => agent.send('put', path, body),
     delete: (path) => agent.send('delete', path),
     async signIn(email, password = testPassword) {
+      await fetchToken();
       const response = await agent.post('/api/session', { email, password });
       await fetchToken();
       return response;

@@ -24,7 +24,7 @@ function limiter(limit: number, keyGenerator: (request: Request) => string): (re
     });
 }
 
-export const attempts = { perAddress: 60, perAccount: 10 };
+export const attempts = { perAddress: 40, perAccount: 10 };
 
 /** Slows guessing down: by the caller's address and by the account tried, whether or not it exists. */
 export function signInLimits(): (request: Request, email: string) => Promise<void> {
