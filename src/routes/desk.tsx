@@ -17,7 +17,9 @@ export function Component() {
       <PageHeader
         title={`${me.name}’s desk`}
         documentTitle={count === 0 ? 'Desk' : `(${count}) Desk`}
-        meta={count === 0 ? 'Nothing waits for you.' : `${count} ${count === 1 ? 'thing waits' : 'things wait'} for you.`}
+        meta={
+          count === 0 ? 'Nothing waits for you.' : `${count} ${count === 1 ? 'thing waits' : 'things wait'} for you.`
+        }
       />
       <PageBody>
         <DeskSheet

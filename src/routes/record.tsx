@@ -64,7 +64,10 @@ export function Component() {
         />
       </div>
       <PageBody className="print:p-0">
-        <RecordSheet record={record} strip={<SmallStrip document={record.dossier.document} width={220} height={84} />} />
+        <RecordSheet
+          record={record}
+          strip={<SmallStrip document={record.dossier.document} width={220} height={84} />}
+        />
       </PageBody>
     </>
   );

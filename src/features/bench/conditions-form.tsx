@@ -29,7 +29,10 @@ export function RunConditions({ run }: { run: Run }) {
     <KeyFigures
       ruled
       figures={[
-        { label: 'Temperature', value: <Quantity value={conditions.temperature} dimension="temperature" absent="not stated" /> },
+        {
+          label: 'Temperature',
+          value: <Quantity value={conditions.temperature} dimension="temperature" absent="not stated" />,
+        },
         { label: 'Humidity', value: conditions.humidity === null ? 'not stated' : `${conditions.humidity} %` },
         { label: 'Fixture', value: conditions.fixture || 'not stated' },
       ]}
@@ -71,7 +74,9 @@ function ConditionsForm({ run }: { run: Run }) {
       <FormError message={form.formState.errors.root?.message} />
       <div className="grid grid-cols-2 items-start gap-3">
         <FormField control={form.control} name="temperature">
-          {(bind) => <QuantityField label="Temperature" dimension="temperature" unit="°C" least={-100} most={300} {...bind} />}
+          {(bind) => (
+            <QuantityField label="Temperature" dimension="temperature" unit="°C" least={-100} most={300} {...bind} />
+          )}
         </FormField>
         <FormField control={form.control} name="humidity">
           {(bind) => <NumberField label="Humidity" unit="%" least={0} most={100} {...bind} />}

@@ -66,9 +66,19 @@ export function InstrumentDialog({ instrument, onClose }: InstrumentDialogProps)
     >
       <Form id={formId} onSubmit={() => void submit()} label="Instrument">
         <FormError message={form.formState.errors.root?.message} />
-        {stale ? <p>Close this and open it again to see what changed; your text stays here to copy until then.</p> : null}
+        {stale ? (
+          <p>Close this and open it again to see what changed; your text stays here to copy until then.</p>
+        ) : null}
         <FormField control={form.control} name="name">
-          {(bind) => <TextField label="Instrument" required autoFocus hint="What it is, e.g. “True-rms multimeter, 6½ digits”." {...bind} />}
+          {(bind) => (
+            <TextField
+              label="Instrument"
+              required
+              autoFocus
+              hint="What it is, e.g. “True-rms multimeter, 6½ digits”."
+              {...bind}
+            />
+          )}
         </FormField>
         <FormField control={form.control} name="serial">
           {(bind) => <TextField label="Serial number" required mono {...bind} />}

@@ -11,9 +11,19 @@ import { Status } from '../../ui/status';
 import { InstrumentDialog } from './instrument-dialog';
 
 const columns: readonly TableColumn<Instrument>[] = [
-  { id: 'number', title: 'Number', value: ({ number }) => number, cell: ({ number }) => <span className="font-mono whitespace-nowrap">{number}</span> },
+  {
+    id: 'number',
+    title: 'Number',
+    value: ({ number }) => number,
+    cell: ({ number }) => <span className="font-mono whitespace-nowrap">{number}</span>,
+  },
   { id: 'name', title: 'Instrument', value: ({ name }) => name },
-  { id: 'serial', title: 'Serial', value: ({ serial }) => serial, cell: ({ serial }) => <span className="font-mono">{serial}</span> },
+  {
+    id: 'serial',
+    title: 'Serial',
+    value: ({ serial }) => serial,
+    cell: ({ serial }) => <span className="font-mono">{serial}</span>,
+  },
   { id: 'location', title: 'Where', value: ({ location }) => location },
   {
     id: 'calibration',
@@ -55,7 +65,12 @@ export function InstrumentsRegister({ instruments, mayChange }: RegisterProps) {
               unexported: true,
               align: 'end',
               cell: (instrument) => (
-                <Button size="small" variant="quiet" aria-label={`Change ${instrument.number}`} onPress={() => setOpen(instrument)}>
+                <Button
+                  size="small"
+                  variant="quiet"
+                  aria-label={`Change ${instrument.number}`}
+                  onPress={() => setOpen(instrument)}
+                >
                   Change
                 </Button>
               ),
@@ -90,7 +105,9 @@ export function InstrumentsRegister({ instruments, mayChange }: RegisterProps) {
           </EmptyState>
         }
       />
-      {open === null ? null : <InstrumentDialog instrument={open === 'new' ? null : open} onClose={() => setOpen(null)} />}
+      {open === null ? null : (
+        <InstrumentDialog instrument={open === 'new' ? null : open} onClose={() => setOpen(null)} />
+      )}
     </>
   );
 }

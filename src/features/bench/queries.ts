@@ -59,10 +59,15 @@ export function useRecordConditions(runId: string) {
 export function useSaveInstrument() {
   const client = useQueryClient();
   return useMutation({
-    mutationFn: (save: { instrumentId: string; body: InstrumentChange } | { instrumentId: null; body: InstrumentCreate }) =>
+    mutationFn: (
+      save: { instrumentId: string; body: InstrumentChange } | { instrumentId: null; body: InstrumentCreate },
+    ) =>
       save.instrumentId === null
         ? callRoute(instrumentRoutes.createInstrument, { body: save.body })
-        : callRoute(instrumentRoutes.changeInstrument, { params: { instrumentId: save.instrumentId }, body: save.body }),
+        : callRoute(instrumentRoutes.changeInstrument, {
+            params: { instrumentId: save.instrumentId },
+            body: save.body,
+          }),
     onSuccess: () => client.invalidateQueries({ queryKey: instrumentsQuery.queryKey }),
   });
 }

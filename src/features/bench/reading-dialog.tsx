@@ -36,7 +36,14 @@ const quantities = (Object.keys(requirementQuantities) as RequirementQuantity[])
 const large = 'max-sm:[&_.field-box]:min-h-12';
 
 /** Entry of one reading by hand. Readings are never changed afterwards, only struck through. */
-export function ReadingDialog({ run, instruments, requirementId, instrumentId, onInstrument, onClose }: ReadingDialogProps) {
+export function ReadingDialog({
+  run,
+  instruments,
+  requirementId,
+  instrumentId,
+  onInstrument,
+  onClose,
+}: ReadingDialogProps) {
   const requirements = run.lines.map(({ requirement }) => requirement);
   const form = useForm<ReadingFields>({
     defaultValues: emptyReading(
@@ -58,7 +65,8 @@ export function ReadingDialog({ run, instruments, requirementId, instrumentId, o
       setAnother(again);
       try {
         const reading = await readReading(fields, requirements, instruments);
-        if (!reading.ok) throw new RequestError(422, 'invalid', 'The reading is not complete.', { issues: reading.issues });
+        if (!reading.ok)
+          throw new RequestError(422, 'invalid', 'The reading is not complete.', { issues: reading.issues });
         await add.mutateAsync(reading.body);
         tell.done('Reading entered');
         onInstrument(fields.instrumentId);
@@ -80,7 +88,11 @@ export function ReadingDialog({ run, instruments, requirementId, instrumentId, o
       role="alertdialog"
       footer={
         <>
-          <Button onPress={() => void submit(true)()} pending={add.isPending && another} className="max-sm:min-h-12 max-sm:w-full">
+          <Button
+            onPress={() => void submit(true)()}
+            pending={add.isPending && another}
+            className="max-sm:min-h-12 max-sm:w-full"
+          >
             Enter and take another
           </Button>
           <Button
@@ -135,7 +147,9 @@ export function ReadingDialog({ run, instruments, requirementId, instrumentId, o
         ) : null}
         {instrument && !instrument.inCalibration ? (
           <>
-            <Caution title={`${instrument.number} has been out of calibration since ${formatDate(instrument.calibrationDue)}.`}>
+            <Caution
+              title={`${instrument.number} has been out of calibration since ${formatDate(instrument.calibrationDue)}.`}
+            >
               A reading with it is marked, in the run and in the record of a release.
             </Caution>
             <FormField control={control} name="outOfCalibrationReason">
@@ -144,7 +158,9 @@ export function ReadingDialog({ run, instruments, requirementId, instrumentId, o
           </>
         ) : null}
         <FormField control={control} name="note">
-          {(bind) => <TextArea label="Note" rows={2} hint="Range, averaging, what was odd. May stay empty." {...bind} />}
+          {(bind) => (
+            <TextArea label="Note" rows={2} hint="Range, averaging, what was odd. May stay empty." {...bind} />
+          )}
         </FormField>
       </Form>
     </Dialog>

@@ -28,7 +28,10 @@ export const emptyReading = (requirement: Requirement | undefined, instrumentId:
 });
 
 /** What is measured and the unit that is meant where none is typed: the requirement's own where there is one. */
-export function measuredAs(fields: Pick<ReadingFields, 'requirementId' | 'quantity'>, requirements: readonly Requirement[]): { quantity: RequirementQuantity; dimension: Dimension; unit: string } {
+export function measuredAs(
+  fields: Pick<ReadingFields, 'requirementId' | 'quantity'>,
+  requirements: readonly Requirement[],
+): { quantity: RequirementQuantity; dimension: Dimension; unit: string } {
   const requirement = requirements.find(({ id }) => id === fields.requirementId);
   const quantity = requirement?.quantity ?? fields.quantity;
   const { dimension } = requirementQuantities[quantity];
@@ -53,7 +56,11 @@ function shownUnit(text: string, value: number, dimension: Dimension, unit: stri
 type ReadReading = { ok: true; body: ReadingCreate } | { ok: false; issues: Issue[] };
 
 /** The reading as it is sent, or what is missing or not understood, at the names of the fields. */
-export async function readReading(fields: ReadingFields, requirements: readonly Requirement[], instruments: readonly Instrument[]): Promise<ReadReading> {
+export async function readReading(
+  fields: ReadingFields,
+  requirements: readonly Requirement[],
+  instruments: readonly Instrument[],
+): Promise<ReadReading> {
   const issues: Issue[] = [];
   const { quantity, dimension, unit } = measuredAs(fields, requirements);
   let value: number | null = null;
@@ -64,7 +71,8 @@ export async function readReading(fields: ReadingFields, requirements: readonly 
     else issues.push({ path: 'value', value: fields.value, message: reading.message });
   }
   const instrument = instruments.find(({ id }) => id === fields.instrumentId);
-  if (instrument === undefined) issues.push({ path: 'instrumentId', message: 'Choose the instrument it was read from.' });
+  if (instrument === undefined)
+    issues.push({ path: 'instrumentId', message: 'Choose the instrument it was read from.' });
   const reason = fields.outOfCalibrationReason.trim();
   const outside = instrument !== undefined && !instrument.inCalibration;
   if (outside && reason === '')

@@ -7,7 +7,8 @@ import type { Dimension } from '../../lib/quantities';
 const isKnown = (quantity: string): quantity is RequirementQuantity => quantity in requirementQuantities;
 
 /** A reading's quantity in words: the name of a result, or what was written. */
-export const quantityWords = (quantity: string): string => (isKnown(quantity) ? requirementQuantities[quantity].label : quantity);
+export const quantityWords = (quantity: string): string =>
+  isKnown(quantity) ? requirementQuantities[quantity].label : quantity;
 
 /** What a reading measures, by its quantity or else by the unit it was typed in. */
 export function dimensionOf(quantity: string, unit: string): Dimension {

@@ -37,7 +37,11 @@ export function ReadingsList({ run, onFirst }: ReadingsListProps) {
           <li key={reading.id} className="border-b border-rule py-2.5">
             <ReadingItem
               reading={reading}
-              title={reading.requirementId === null ? 'For information' : (titles.get(reading.requirementId) ?? 'A requirement')}
+              title={
+                reading.requirementId === null
+                  ? 'For information'
+                  : (titles.get(reading.requirementId) ?? 'A requirement')
+              }
               onStrike={run.mayRecord && reading.struck === null ? () => setStriking(reading) : null}
             />
           </li>
@@ -58,8 +62,8 @@ export function ReadingsList({ run, onFirst }: ReadingsListProps) {
       >
         {striking ? (
           <p>
-            {quantityWords(striking.quantity)}: {shown(striking)}. It stays readable, with your name and this reason, and no longer
-            counts.
+            {quantityWords(striking.quantity)}: {shown(striking)}. It stays readable, with your name and this reason,
+            and no longer counts.
           </p>
         ) : null}
       </ConfirmDialog>
@@ -82,13 +86,19 @@ function ReadingItem({ reading, title, onStrike }: ReadingItemProps) {
       <div className="min-w-0">
         <p className="flex flex-wrap items-baseline gap-x-4">
           <span className={classNames('text-lg', struck && 'line-through decoration-cinnabar decoration-2')}>
-            <Quantity value={value} dimension={dimensionOf(quantity, unit)} {...(unit === '' ? {} : { unit })} digits={4} />
+            <Quantity
+              value={value}
+              dimension={dimensionOf(quantity, unit)}
+              {...(unit === '' ? {} : { unit })}
+              digits={4}
+            />
           </span>
           <span className="wrap-anywhere">{title}</span>
           {struck ? <Status tone="bad">struck through</Status> : null}
         </p>
         <p className="text-sm wrap-anywhere text-graphite">
-          {quantityWords(quantity)}, with <span className="font-mono">{instrument.number}</span> {instrument.name}; {by.name},{' '}
+          {quantityWords(quantity)}, with <span className="font-mono">{instrument.number}</span> {instrument.name};{' '}
+          {by.name},{' '}
           <time dateTime={at} title={formatDateTime(at)}>
             {formatAgo(at)}
           </time>
@@ -106,7 +116,13 @@ function ReadingItem({ reading, title, onStrike }: ReadingItemProps) {
         ) : null}
       </div>
       {onStrike ? (
-        <Button size="small" variant="quiet" onPress={onStrike} aria-label={`Strike through ${shown(reading)}`} className="max-sm:min-h-11">
+        <Button
+          size="small"
+          variant="quiet"
+          onPress={onStrike}
+          aria-label={`Strike through ${shown(reading)}`}
+          className="max-sm:min-h-11"
+        >
           Strike through
         </Button>
       ) : null}

@@ -8,8 +8,8 @@ export function RunCautions({ run }: { run: Run }) {
   return (
     <div className="flex flex-col gap-2.5">
       <Caution title="Strong magnets.">
-        They pinch and shatter, wipe media, and disturb pacemakers and other implants: 0.5 mT is the usual limit there. Keep
-        them apart from each other and from steel.
+        They pinch and shatter, wipe media, and disturb pacemakers and other implants: 0.5 mT is the usual limit there.
+        Keep them apart from each other and from steel.
       </Caution>
       <Caution title="Shaker and moving mass.">
         Parts can come loose and fly. Check the fixing before starting, keep clear of the axis of travel, and wear eye

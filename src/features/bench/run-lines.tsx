@@ -19,7 +19,9 @@ interface RunLinesProps {
 /** The requirements that this run is to show: limit, estimate, measured mean, margin, verdict. */
 export function RunLines({ lines, onMeasure }: RunLinesProps) {
   if (lines.length === 0)
-    return <p className="text-graphite">The brief asks nothing of the bench: readings are taken for information only.</p>;
+    return (
+      <p className="text-graphite">The brief asks nothing of the bench: readings are taken for information only.</p>
+    );
   return (
     <ul className="grid gap-3 @2xl:grid-cols-2">
       {lines.map((line) => (
@@ -53,7 +55,8 @@ function LineFigures({ line: { requirement, estimated, measured, margin, reading
         <div>
           <dt className="text-sm text-graphite">Limit</dt>
           <dd>
-            {comparisonSign[requirement.comparison]} <Quantity value={requirement.limit} dimension={dimension} {...unit} />
+            {comparisonSign[requirement.comparison]}{' '}
+            <Quantity value={requirement.limit} dimension={dimension} {...unit} />
           </dd>
         </div>
         <div>

@@ -26,13 +26,20 @@ export function RunSheet({ run, instruments }: { run: Run; instruments: readonly
           title="Readings"
           aside={
             run.state === 'open' ? (
-              <ActionButton size="small" whyNot={run.mayRecord ? null : run.whyNotRecord} onPress={() => setMeasuring('')}>
+              <ActionButton
+                size="small"
+                whyNot={run.mayRecord ? null : run.whyNotRecord}
+                onPress={() => setMeasuring('')}
+              >
                 Enter a reading for information
               </ActionButton>
             ) : null
           }
         >
-          <ReadingsList run={run} onFirst={run.mayRecord ? () => setMeasuring(run.lines[0]?.requirement.id ?? '') : null} />
+          <ReadingsList
+            run={run}
+            onFirst={run.mayRecord ? () => setMeasuring(run.lines[0]?.requirement.id ?? '') : null}
+          />
         </Section>
       </div>
       <div className="flex min-w-0 flex-col gap-8">

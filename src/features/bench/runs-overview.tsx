@@ -17,10 +17,16 @@ const Moment = ({ at }: { at: string }) => (
   </time>
 );
 
-const revisionName = ({ designNumber, letter }: { designNumber: string; letter: string }) => `${designNumber} ${letter}`;
+const revisionName = ({ designNumber, letter }: { designNumber: string; letter: string }) =>
+  `${designNumber} ${letter}`;
 
 const runColumns: readonly TableColumn<RunListLine>[] = [
-  { id: 'number', title: 'Run', value: ({ number }) => number, cell: ({ number }) => <span className="font-mono whitespace-nowrap">{number}</span> },
+  {
+    id: 'number',
+    title: 'Run',
+    value: ({ number }) => number,
+    cell: ({ number }) => <span className="font-mono whitespace-nowrap">{number}</span>,
+  },
   { id: 'state', title: 'State', value: (run) => runStateWords(run), cell: (run) => <RunState run={run} /> },
   {
     id: 'revision',
@@ -33,13 +39,19 @@ const runColumns: readonly TableColumn<RunListLine>[] = [
     ),
   },
   { id: 'design', title: 'Design', value: ({ revision }) => revision.designTitle },
-  { id: 'started', title: 'Started', value: ({ startedAt }) => startedAt, cell: ({ startedAt }) => <Moment at={startedAt} /> },
+  {
+    id: 'started',
+    title: 'Started',
+    value: ({ startedAt }) => startedAt,
+    cell: ({ startedAt }) => <Moment at={startedAt} />,
+  },
   { id: 'by', title: 'By', value: ({ startedBy }) => startedBy.name },
   {
     id: 'closed',
     title: 'Closed',
     value: ({ closedAt }) => closedAt,
-    cell: ({ closedAt }) => (closedAt === null ? <span className="text-graphite">still open</span> : <Moment at={closedAt} />),
+    cell: ({ closedAt }) =>
+      closedAt === null ? <span className="text-graphite">still open</span> : <Moment at={closedAt} />,
   },
 ];
 
@@ -52,11 +64,16 @@ export function RunsOverview({ runs, cleared }: { runs: readonly RunListLine[]; 
       <div className="grid gap-x-10 gap-y-8 xl:grid-cols-2">
         <Section title="Cleared and waiting">
           {cleared.length === 0 ? (
-            <p className="text-graphite">Nothing waits for the bench. A revision comes here once its review is complete.</p>
+            <p className="text-graphite">
+              Nothing waits for the bench. A revision comes here once its review is complete.
+            </p>
           ) : (
             <ul className="flex flex-col">
               {cleared.map((each) => (
-                <li key={each.revisionId} className="flex flex-wrap items-center justify-between gap-x-4 gap-y-1 border-b border-rule py-2">
+                <li
+                  key={each.revisionId}
+                  className="flex flex-wrap items-center justify-between gap-x-4 gap-y-1 border-b border-rule py-2"
+                >
                   <span className="min-w-0">
                     <span className="font-semibold">
                       <span className="font-mono">{revisionName(each)}</span> {each.designTitle}
@@ -79,11 +96,14 @@ export function RunsOverview({ runs, cleared }: { runs: readonly RunListLine[]; 
           ) : (
             <ul className="flex flex-col">
               {open.map((run) => (
-                <li key={run.id} className="flex flex-wrap items-center justify-between gap-x-4 gap-y-1 border-b border-rule py-2">
+                <li
+                  key={run.id}
+                  className="flex flex-wrap items-center justify-between gap-x-4 gap-y-1 border-b border-rule py-2"
+                >
                   <span className="min-w-0">
                     <span className="font-semibold">
-                      <span className="font-mono">{run.number}</span> for <span className="font-mono">{revisionName(run.revision)}</span>{' '}
-                      {run.revision.designTitle}
+                      <span className="font-mono">{run.number}</span> for{' '}
+                      <span className="font-mono">{revisionName(run.revision)}</span> {run.revision.designTitle}
                     </span>
                     <span className="block text-sm text-graphite">
                       started <Moment at={run.startedAt} /> by {run.startedBy.name}

@@ -28,14 +28,18 @@ interface BriefEditorProps {
 /** Writing or changing a brief: keeps the text while it is written, puts what is wrong at its field, never overwrites. */
 export function BriefEditor({ brief, header, saveLabel, save, onSaved }: BriefEditorProps) {
   const formId = useId();
-  const draft = useKeptDraft<BriefFields>(brief?.id ?? 'new', brief?.version ?? null);
-  const [base, setBase] = useState(draft.found?.version ?? brief?.version ?? null);
+  const draft = useKeptDraft<BriefFields>(brief?.id ?? 'new');
+  // Text that was found goes on from the version it was written on: a newer one is told about, not overwritten.
+  const [base, setBase] = useState(draft.found === null ? (brief?.version ?? null) : draft.found.version);
   const [restored, setRestored] = useState(draft.found !== null);
   const [changed, setChanged] = useState<Change[] | null>(null);
   const saved = brief === null ? emptyBrief : () => briefFields(brief.document);
   const [initial] = useState(() => (draft.found === null ? saved() : { ...saved(), ...draft.found.values }));
   const { keep, forget } = draft;
-  const form = useBriefForm(initial, useCallback((values) => keep(values), [keep]));
+  const form = useBriefForm(
+    initial,
+    useCallback((values) => keep(values, base), [keep, base]),
+  );
 
   const send = (version: number | null) =>
     form.handleSubmit(async (fields) => {
@@ -65,7 +69,13 @@ export function BriefEditor({ brief, header, saveLabel, save, onSaved }: BriefEd
   return (
     <>
       {header(
-        <Button variant="primary" type="submit" form={formId} pending={form.formState.isSubmitting} disabled={changed !== null}>
+        <Button
+          variant="primary"
+          type="submit"
+          form={formId}
+          pending={form.formState.isSubmitting}
+          disabled={changed !== null}
+        >
           {saveLabel}
         </Button>,
       )}
@@ -111,7 +121,10 @@ function StaleBrief({ changed, brief, onMine, onTheirs }: StaleBriefProps) {
       <ul className="list-disc pl-5">
         {changed.map((change) => (
           <li key={`${change.version} ${change.at}`}>
-            {change.what} <span className="text-graphite">({change.by ?? 'the server'}, {formatAgo(change.at)})</span>
+            {change.what}{' '}
+            <span className="text-graphite">
+              ({change.by ?? 'the server'}, {formatAgo(change.at)})
+            </span>
           </li>
         ))}
       </ul>

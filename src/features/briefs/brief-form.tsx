@@ -24,7 +24,10 @@ interface BriefFormProps {
 }
 
 /** The form's state, handing every change to the keeper of unsaved text. */
-export function useBriefForm(defaultValues: BriefFields, keep: (values: BriefFields) => void): UseFormReturn<BriefFields> {
+export function useBriefForm(
+  defaultValues: BriefFields,
+  keep: (values: BriefFields) => void,
+): UseFormReturn<BriefFields> {
   const form = useForm<BriefFields>({ defaultValues });
   const { subscribe } = form;
   useEffect(
@@ -49,7 +52,15 @@ export function BriefForm({ id, form, onSubmit }: BriefFormProps) {
       <FieldGroup title="What and where">
         <div className="grid gap-x-4 gap-y-3 @xl:grid-cols-2">
           <FormField control={control} name="title">
-            {(bind) => <TextField label="Title" required className="@xl:col-span-2" hint="What is powered, on which machine." {...bind} />}
+            {(bind) => (
+              <TextField
+                label="Title"
+                required
+                className="@xl:col-span-2"
+                hint="What is powered, on which machine."
+                {...bind}
+              />
+            )}
           </FormField>
           <FormField control={control} name="machine">
             {(bind) => <TextField label="Machine" {...bind} />}
@@ -72,7 +83,9 @@ export function BriefForm({ id, form, onSubmit }: BriefFormProps) {
             {(bind) => <TextField label="By what load" hint="The node, its voltage, how it draws." {...bind} />}
           </FormField>
           <FormField control={control} name="massLimit">
-            {(bind) => <QuantityField label="Mass at most" source="no limit stated" {...briefUnits.massLimit} {...bind} />}
+            {(bind) => (
+              <QuantityField label="Mass at most" source="no limit stated" {...briefUnits.massLimit} {...bind} />
+            )}
           </FormField>
           <FormField control={control} name="temperature.lowest">
             {(bind) => <QuantityField label="Lowest temperature" required {...briefUnits.temperature} {...bind} />}
@@ -82,7 +95,13 @@ export function BriefForm({ id, form, onSubmit }: BriefFormProps) {
           </FormField>
           <FormField control={control} name="lifeCycles">
             {(bind) => (
-              <QuantityField label="Life, in cycles" source="not stated" placeholder="1e9" {...briefUnits.lifeCycles} {...bind} />
+              <QuantityField
+                label="Life, in cycles"
+                source="not stated"
+                placeholder="1e9"
+                {...briefUnits.lifeCycles}
+                {...bind}
+              />
             )}
           </FormField>
           <FormField control={control} name="orientation">
@@ -130,7 +149,11 @@ function VibrationGroup({ control }: { control: BriefControl }) {
               { value: 'spectrum', label: 'Spectrum' },
               { value: 'recording', label: 'Recording', disabled: !recording },
             ]}
-            hint={recording ? undefined : 'A recording cannot be entered here yet; state its strongest tones or its spectrum.'}
+            hint={
+              recording
+                ? undefined
+                : 'A recording cannot be entered here yet; state its strongest tones or its spectrum.'
+            }
             {...bind}
             onChange={(next) => {
               if (next !== '') bind.onChange(next);
@@ -147,7 +170,9 @@ function VibrationGroup({ control }: { control: BriefControl }) {
         {kind === 'tones' ? <ToneList control={control} /> : null}
         {kind === 'spectrum' ? <SpectrumEditor control={control} /> : null}
         {kind === 'recording' ? (
-          <Caution severity="info">The recording of this brief is kept as it is; its samples cannot be edited here.</Caution>
+          <Caution severity="info">
+            The recording of this brief is kept as it is; its samples cannot be edited here.
+          </Caution>
         ) : null}
       </div>
     </FieldGroup>

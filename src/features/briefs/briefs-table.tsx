@@ -6,11 +6,21 @@ import type { TableColumn } from '../../ui/data-table';
 import { EmptyState } from '../../ui/empty-state';
 
 const columns: readonly TableColumn<BriefSummary>[] = [
-  { id: 'number', title: 'Number', value: ({ number }) => number, cell: ({ number }) => <span className="font-mono whitespace-nowrap">{number}</span> },
+  {
+    id: 'number',
+    title: 'Number',
+    value: ({ number }) => number,
+    cell: ({ number }) => <span className="font-mono whitespace-nowrap">{number}</span>,
+  },
   { id: 'title', title: 'Title', value: ({ title }) => title },
   { id: 'machine', title: 'Machine', value: ({ machine }) => machine },
   { id: 'vibration', title: 'Vibration', value: ({ vibrationInWords }) => vibrationInWords },
-  { id: 'power', title: 'Power needed', unit: 'mW', value: ({ powerNeeded }) => Number((powerNeeded * 1e3).toPrecision(12)) },
+  {
+    id: 'power',
+    title: 'Power needed',
+    unit: 'mW',
+    value: ({ powerNeeded }) => Number((powerNeeded * 1e3).toPrecision(12)),
+  },
   { id: 'designs', title: 'Designs', value: ({ designs }) => designs },
   {
     id: 'updated',

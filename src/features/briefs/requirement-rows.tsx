@@ -56,7 +56,8 @@ function RequirementRow({ form, index, onRemove }: RowProps) {
   // A title that only repeats the quantity follows it.
   const choose = (next: RequirementQuantity) => {
     const title = form.getValues(`requirements.${index}.title`).trim();
-    if (title === '' || title === label) form.setValue(`requirements.${index}.title`, requirementQuantities[next].label);
+    if (title === '' || title === label)
+      form.setValue(`requirements.${index}.title`, requirementQuantities[next].label);
   };
   return (
     <div
@@ -90,7 +91,12 @@ function RequirementRow({ form, index, onRemove }: RowProps) {
       <FormField control={control} name={`requirements.${index}.shownBy`}>
         {(bind) => <Select label="Shown by" choices={shownBy} {...bind} />}
       </FormField>
-      <IconButton icon={Trash2} label={`Remove requirement ${index + 1}`} onPress={onRemove} className="self-end @3xl:mt-5 @3xl:self-start" />
+      <IconButton
+        icon={Trash2}
+        label={`Remove requirement ${index + 1}`}
+        onPress={onRemove}
+        className="self-end @3xl:mt-5 @3xl:self-start"
+      />
     </div>
   );
 }

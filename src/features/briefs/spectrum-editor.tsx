@@ -26,12 +26,12 @@ export function SpectrumEditor({ control }: { control: Control<BriefFields> }) {
     <div className="flex flex-col gap-4">
       <div className="grid grid-cols-2 items-start gap-x-3 gap-y-3 sm:grid-cols-3">
         <FormField control={control} name="vibration.spectrum.unit">
-          {(bind) => (
-            <Select label="Unit of density" choices={unitChoices} hint="One-sided, per hertz." {...bind} />
-          )}
+          {(bind) => <Select label="Unit of density" choices={unitChoices} hint="One-sided, per hertz." {...bind} />}
         </FormField>
         <FormField control={control} name="vibration.spectrum.duration">
-          {(bind) => <QuantityField label="Length of the record" dimension="time" unit="s" least={0.01} most={3600} {...bind} />}
+          {(bind) => (
+            <QuantityField label="Length of the record" dimension="time" unit="s" least={0.01} most={3600} {...bind} />
+          )}
         </FormField>
         <FormField control={control} name="vibration.spectrum.seed">
           {(bind) => (
@@ -148,7 +148,11 @@ function PasteDialog({ onClose, onPoints }: { onClose: () => void; onPoints: (po
         />
         {skipped.length > 0 ? (
           <p className="text-graphite">
-            Left out, since no two numbers stand there: {skipped.slice(0, 3).map((line) => `“${line.slice(0, 40)}”`).join(', ')}
+            Left out, since no two numbers stand there:{' '}
+            {skipped
+              .slice(0, 3)
+              .map((line) => `“${line.slice(0, 40)}”`)
+              .join(', ')}
             {skipped.length > 3 ? ` and ${skipped.length - 3} more` : ''}.
           </p>
         ) : null}

@@ -30,7 +30,9 @@ export function OneTone({ control, at, withPhase }: OneToneProps) {
         {(bind) => <QuantityField label="Frequency" dimension="frequency" unit="Hz" {...frequencyLimits} {...bind} />}
       </FormField>
       <FormField control={control} name={`${at}.acceleration`}>
-        {(bind) => <QuantityField label="Acceleration" dimension="acceleration" unit="m/s²" {...accelerationLimits} {...bind} />}
+        {(bind) => (
+          <QuantityField label="Acceleration" dimension="acceleration" unit="m/s²" {...accelerationLimits} {...bind} />
+        )}
       </FormField>
       <FormField control={control} name={`${at}.as`}>
         {(bind) => <Select label="Stated as" choices={measures} {...bind} />}

@@ -51,9 +51,16 @@ function propertyColumn(label: string, dimensionName: string): TableColumn<Catal
 }
 
 function columnsOf(entries: readonly CatalogueEntry[], key: string): TableColumn<CatalogueEntry>[] {
-  const properties = new Map(entries.flatMap((entry) => entry.properties.map(({ label, dimension }) => [label, dimension] as const)));
+  const properties = new Map(
+    entries.flatMap((entry) => entry.properties.map(({ label, dimension }) => [label, dimension] as const)),
+  );
   return [
-    { id: 'key', title: key, value: (entry) => entry.key, cell: (entry) => <span className="font-mono whitespace-nowrap">{entry.key}</span> },
+    {
+      id: 'key',
+      title: key,
+      value: (entry) => entry.key,
+      cell: (entry) => <span className="font-mono whitespace-nowrap">{entry.key}</span>,
+    },
     ...[...properties].map(([label, dimension]) => propertyColumn(label, dimension)),
     {
       id: 'source',
@@ -64,7 +71,17 @@ function columnsOf(entries: readonly CatalogueEntry[], key: string): TableColumn
   ];
 }
 
-function KindTable({ entries, title, keyTitle, find }: { entries: readonly CatalogueEntry[]; title: string; keyTitle: string; find: string }) {
+function KindTable({
+  entries,
+  title,
+  keyTitle,
+  find,
+}: {
+  entries: readonly CatalogueEntry[];
+  title: string;
+  keyTitle: string;
+  find: string;
+}) {
   const columns = useMemo(() => columnsOf(entries, keyTitle), [entries, keyTitle]);
   return (
     <DataTable
@@ -73,7 +90,11 @@ function KindTable({ entries, title, keyTitle, find }: { entries: readonly Catal
       columns={columns}
       rowKey={({ key }) => key}
       filterLabel={find}
-      empty={<EmptyState title="None in the catalogue.">A design document can carry the properties themselves instead of a name.</EmptyState>}
+      empty={
+        <EmptyState title="None in the catalogue.">
+          A design document can carry the properties themselves instead of a name.
+        </EmptyState>
+      }
     />
   );
 }
@@ -85,7 +106,12 @@ export function CatalogueTables({ entries }: { entries: readonly CatalogueEntry[
       label="Catalogue"
       tabs={kinds.map(({ kind, title, key, find }) => {
         const own = entries.filter((entry) => entry.kind === kind);
-        return { id: kind, label: title, count: own.length, content: <KindTable entries={own} title={title} keyTitle={key} find={find} /> };
+        return {
+          id: kind,
+          label: title,
+          count: own.length,
+          content: <KindTable entries={own} title={title} keyTitle={key} find={find} />,
+        };
       })}
     />
   );

@@ -55,7 +55,10 @@ export function DeskSheet({ desk: { waitsForMe, iWaitFor, recent }, firstSteps }
             <Items items={waitsForMe} urgent />
           )}
         </Section>
-        <Section title="I wait for" aside={iWaitFor.length === 0 ? null : <Count tone="neutral">{iWaitFor.length}</Count>}>
+        <Section
+          title="I wait for"
+          aside={iWaitFor.length === 0 ? null : <Count tone="neutral">{iWaitFor.length}</Count>}
+        >
           {iWaitFor.length === 0 ? (
             <p className="text-graphite">Nothing of yours is with somebody else.</p>
           ) : (
@@ -65,11 +68,16 @@ export function DeskSheet({ desk: { waitsForMe, iWaitFor, recent }, firstSteps }
       </div>
       <Section title="Lately" className="min-w-0">
         {recent.length === 0 ? (
-          <p className="text-graphite">Nothing has happened yet. Every step of a revision is told here in a sentence.</p>
+          <p className="text-graphite">
+            Nothing has happened yet. Every step of a revision is told here in a sentence.
+          </p>
         ) : (
           <ol className="flex flex-col">
             {recent.map((entry, index) => (
-              <li key={`${entry.at} ${index}`} className="grid grid-cols-[minmax(0,1fr)_auto] gap-x-4 border-b border-rule py-2">
+              <li
+                key={`${entry.at} ${index}`}
+                className="grid grid-cols-[minmax(0,1fr)_auto] gap-x-4 border-b border-rule py-2"
+              >
                 <span className="min-w-0 wrap-anywhere">
                   {entry.sentence}
                   <Link to={entry.href} className="link block w-fit text-sm">

@@ -32,7 +32,9 @@ export function DossierRuns({ runs }: { runs: readonly DossierRun[] }) {
             ))}
           </ul>
           <ReadingNotes run={run} />
-          {run.statement === null || run.statement === '' ? null : <p className="wrap-anywhere whitespace-pre-line">{run.statement}</p>}
+          {run.statement === null || run.statement === '' ? null : (
+            <p className="wrap-anywhere whitespace-pre-line">{run.statement}</p>
+          )}
         </li>
       ))}
     </ul>

@@ -11,7 +11,12 @@ import { Status } from '../../ui/status';
 import type { Tone } from '../../ui/status';
 import { DossierRuns } from './dossier-runs';
 
-const tones: Record<Margin['verdict'], Tone> = { meets: 'good', marginal: 'attention', fails: 'bad', notComputed: 'neutral' };
+const tones: Record<Margin['verdict'], Tone> = {
+  meets: 'good',
+  marginal: 'attention',
+  fails: 'bad',
+  notComputed: 'neutral',
+};
 
 function Part({ title, children }: { title: string; children: ReactNode }) {
   return (
@@ -30,7 +35,11 @@ function Limit({ requirement }: { requirement: Requirement }) {
   return (
     <>
       {comparisonSign[requirement.comparison]}{' '}
-      <Quantity value={requirement.limit} dimension={dimension} {...(requirement.unit === '' ? {} : { unit: requirement.unit })} />
+      <Quantity
+        value={requirement.limit}
+        dimension={dimension}
+        {...(requirement.unit === '' ? {} : { unit: requirement.unit })}
+      />
     </>
   );
 }
@@ -93,7 +102,10 @@ export function RecordSheet({ record, strip }: RecordSheetProps) {
   const { response, engine, cautions } = dossier.estimate;
   const margins = estimateMargins(dossier.brief.document.requirements, dossier.estimate);
   return (
-    <article className="sheet mx-auto flex w-full max-w-4xl flex-col gap-7 px-5 py-6 sm:px-9 sm:py-8 print:max-w-none print:border-0 print:p-0" aria-label={`Record ${record.releaseNumber}`}>
+    <article
+      className="sheet mx-auto flex w-full max-w-4xl flex-col gap-7 px-5 py-6 sm:px-9 sm:py-8 print:max-w-none print:border-0 print:p-0"
+      aria-label={`Record ${record.releaseNumber}`}
+    >
       {recall ? (
         <div role="note" className="flex flex-col gap-1 border-2 border-cinnabar px-4 py-3">
           <p className="text-lg font-bold text-cinnabar">Recalled</p>
@@ -103,10 +115,15 @@ export function RecordSheet({ record, strip }: RecordSheetProps) {
           </p>
         </div>
       ) : null}
-      {supersededBy === null ? null : <Caution severity="info" title="Superseded.">A later revision has been released: {supersededBy}.</Caution>}
+      {supersededBy === null ? null : (
+        <Caution severity="info" title="Superseded.">
+          A later revision has been released: {supersededBy}.
+        </Caution>
+      )}
       {intact ? null : (
         <Caution severity="stop" title="This record is not intact.">
-          Its content no longer fits its digest. Do not rely on it; tell an administrator, who can check the audit trail.
+          Its content no longer fits its digest. Do not rely on it; tell an administrator, who can check the audit
+          trail.
         </Caution>
       )}
       <header className="flex flex-wrap items-start justify-between gap-x-8 gap-y-4">
@@ -114,7 +131,8 @@ export function RecordSheet({ record, strip }: RecordSheetProps) {
           <p className="text-graphite">Release record</p>
           <p className="font-mono text-3xl font-bold">{record.releaseNumber}</p>
           <p className="mt-1 text-lg wrap-anywhere">
-            {dossier.design.title}, <span className="font-mono">{dossier.design.number}</span> revision {dossier.design.letter}
+            {dossier.design.title}, <span className="font-mono">{dossier.design.number}</span> revision{' '}
+            {dossier.design.letter}
           </p>
         </div>
         {strip}
@@ -125,7 +143,10 @@ export function RecordSheet({ record, strip }: RecordSheetProps) {
           { label: 'Released', value: utc(record.releasedAt) },
           { label: 'By', value: record.releasedBy.name },
           { label: 'Authors', value: dossier.authors.map(({ name }) => name).join(', ') },
-          { label: 'For brief', value: `${dossier.brief.number}, version ${dossier.brief.version}: ${dossier.brief.document.title}` },
+          {
+            label: 'For brief',
+            value: `${dossier.brief.number}, version ${dossier.brief.version}: ${dossier.brief.document.title}`,
+          },
           { label: 'Estimated power', value: <Quantity value={response.loadPower} dimension="power" /> },
           { label: 'Engine', value: `${engine}, ${response.method}${response.converged ? '' : ', not converged'}` },
         ]}
@@ -150,7 +171,9 @@ export function RecordSheet({ record, strip }: RecordSheetProps) {
               </p>
               <div className="min-w-0">
                 <p>“{signature.meaning}”</p>
-                {signature.statement === '' ? null : <p className="wrap-anywhere whitespace-pre-line">{signature.statement}</p>}
+                {signature.statement === '' ? null : (
+                  <p className="wrap-anywhere whitespace-pre-line">{signature.statement}</p>
+                )}
                 <p className="font-mono text-xs break-all text-graphite">{signature.digest}</p>
               </div>
             </li>
@@ -194,8 +217,9 @@ export function RecordSheet({ record, strip }: RecordSheetProps) {
         <p className="flex flex-wrap items-baseline gap-x-3">
           <Status tone={intact ? 'good' : 'bad'}>{intact ? 'intact' : 'not intact'}</Status>
           <span className="text-graphite">
-            {intact ? 'The dossier fits its digest' : 'The dossier does not fit its digest'}; checked when this page was loaded,{' '}
-            {formatDateTime(new Date())}. {formatCount(dossier.signatures.length, 'signature')}, {formatCount(dossier.runs.length, 'run')}.
+            {intact ? 'The dossier fits its digest' : 'The dossier does not fit its digest'}; checked when this page was
+            loaded, {formatDateTime(new Date())}. {formatCount(dossier.signatures.length, 'signature')},{' '}
+            {formatCount(dossier.runs.length, 'run')}.
           </span>
         </p>
         <p className="font-mono text-xs break-all">

@@ -14,7 +14,12 @@ const columns: readonly TableColumn<RecordSummary>[] = [
     value: ({ releaseNumber }) => releaseNumber,
     cell: ({ releaseNumber }) => <span className="font-mono whitespace-nowrap">{releaseNumber}</span>,
   },
-  { id: 'state', title: 'State', value: ({ state }) => stateWords[state], cell: ({ state }) => <Status tone={recordTone(state)}>{stateWords[state]}</Status> },
+  {
+    id: 'state',
+    title: 'State',
+    value: ({ state }) => stateWords[state],
+    cell: ({ state }) => <Status tone={recordTone(state)}>{stateWords[state]}</Status>,
+  },
   {
     id: 'revision',
     title: 'Revision',

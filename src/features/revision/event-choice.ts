@@ -36,7 +36,10 @@ export interface EventChoice {
  * Orders what the chart knows here by what the server offers: the primary action, at most two beside it, the others
  * further away. A remark is closed where it stands, so that step is not among them.
  */
-export function chooseEvents(events: readonly WayEvent[], { availableEvents, whyNot }: Pick<EventSubject, 'availableEvents' | 'whyNot'>): EventChoice {
+export function chooseEvents(
+  events: readonly WayEvent[],
+  { availableEvents, whyNot }: Pick<EventSubject, 'availableEvents' | 'whyNot'>,
+): EventChoice {
   const offered = events
     .filter(({ type }) => type !== 'closeRemark' && (availableEvents.includes(type) || whyNot[type] !== undefined))
     .map(({ type }): OfferedEvent => ({

@@ -17,7 +17,8 @@ interface RevisionActionsProps {
 
 /** Where a step takes the person who took it; null where that is the same page. */
 function placeAfter(revision: Revision, event: RevisionEventType): string | null {
-  if (event === 'rework') return revision.continuedAs === null ? null : `/designs/${revision.design.id}/${revision.continuedAs}`;
+  if (event === 'rework')
+    return revision.continuedAs === null ? null : `/designs/${revision.design.id}/${revision.continuedAs}`;
   if (event === 'release') return revision.recordId === null ? null : `/records/${revision.recordId}`;
   if (event !== 'startRun') return null;
   const run = revision.runs.find(({ state }) => state === 'open');

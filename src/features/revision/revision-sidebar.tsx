@@ -46,14 +46,17 @@ export function RevisionRemarks({ revision, target, onTargetDone }: RemarksProps
       aside={
         remarks.length === 0 ? null : (
           <span className="text-sm text-graphite">
-            {open.length === 0 ? 'all closed' : `${open.length} open${blocking.length > 0 ? `, ${blocking.length} blocking` : ''}`}
+            {open.length === 0
+              ? 'all closed'
+              : `${open.length} open${blocking.length > 0 ? `, ${blocking.length} blocking` : ''}`}
           </span>
         )
       }
     >
       {remarks.length === 0 ? (
         <p className="text-graphite">
-          No remarks. {known ? 'A remark can be about a value, a result or the whole.' : 'Remarks are written during review.'}
+          No remarks.{' '}
+          {known ? 'A remark can be about a value, a result or the whole.' : 'Remarks are written during review.'}
         </p>
       ) : (
         <ul className="flex flex-col gap-4">
@@ -61,7 +64,9 @@ export function RevisionRemarks({ revision, target, onTargetDone }: RemarksProps
             <RemarkItem
               key={remark.id}
               remark={remark}
-              onClose={availableEvents.includes('closeRemark') && remark.closed === null ? () => setClosing(remark) : null}
+              onClose={
+                availableEvents.includes('closeRemark') && remark.closed === null ? () => setClosing(remark) : null
+              }
             />
           ))}
         </ul>
@@ -117,7 +122,13 @@ function RemarkItem({ remark, onClose }: { remark: Remark; onClose: (() => void)
       ) : null}
       {onClose ? (
         <div>
-          <Button size="small" variant="quiet" onPress={onClose} aria-label={`${eventWords.closeRemark} of ${by.name}`} className="-ml-2.5">
+          <Button
+            size="small"
+            variant="quiet"
+            onPress={onClose}
+            aria-label={`${eventWords.closeRemark} of ${by.name}`}
+            className="-ml-2.5"
+          >
             {eventWords.closeRemark}
           </Button>
         </div>

@@ -34,7 +34,10 @@ export function targetsOf(revision: Revision): Choice[] {
   const paths: string[] = [];
   leafPaths(revision.document, '', paths);
   const results = Object.values(requirementQuantities).map((each) => each.path.join('.'));
-  return [...results.map((path) => ({ value: path, label: targetWords(path), detail: 'result' })), ...paths.map((path) => ({ value: path, label: targetWords(path) }))];
+  return [
+    ...results.map((path) => ({ value: path, label: targetWords(path), detail: 'result' })),
+    ...paths.map((path) => ({ value: path, label: targetWords(path) })),
+  ];
 }
 
 function facts(revision: Revision): EventSubject['facts'] {

@@ -33,7 +33,9 @@ export function runSubject(run: Run): EventSubject {
             {formatCount(standing.length, 'standing reading')} for {formatCount(run.lines.length, 'requirement')};{' '}
             {missed === 0 ? 'none is missed' : `${missed} missed`}.
           </li>
-          {outside > 0 ? <li>{formatCount(outside, 'reading was', 'readings were')} taken with an instrument out of calibration.</li> : null}
+          {outside > 0 ? (
+            <li>{formatCount(outside, 'reading was', 'readings were')} taken with an instrument out of calibration.</li>
+          ) : null}
         </ul>
       ),
     },

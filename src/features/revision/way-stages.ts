@@ -33,7 +33,9 @@ export function mainWay(): RevisionState[] {
 }
 
 /** The gates in the order of the chart. */
-export const stages: readonly Stage[] = [...new Set(mainWay().map((state) => stageOfMainState[state]))].filter((stage) => stage !== undefined);
+export const stages: readonly Stage[] = [...new Set(mainWay().map((state) => stageOfMainState[state]))].filter(
+  (stage) => stage !== undefined,
+);
 
 export interface Standing {
   /** Last stage reached; null where the state itself does not tell. */
