@@ -16,8 +16,8 @@ import { NoRestError, springSuspension } from '#physics/models/suspension';
 
 interface Row {
   id: string;
-  given: Record<string, number & number[]>;
-  expected: Record<string, number & number[]>;
+  given: Record<string, number>;
+  expected: Record<string, number>;
 }
 const handbook = JSON.parse(
   readFileSync(new URL('../reference/handbook/suspension.json', import.meta.url), 'utf8'),
@@ -55,9 +55,9 @@ describe('a helical spring', () => {
   });
 
   it('has the curvature factors of handbook/suspension.json#curvature-factors (P1)', () => {
-    const { given, expected } = row('curvature-factors');
-    given.index!.forEach((index, n) => {
-      near(curvatureFactor({ wireDiameter: 1, meanDiameter: index }), expected.EN13906![n]!, 1e-6);
+    const { given, expected } = row('curvature-factors') as unknown as Record<string, Record<string, number[]>>;
+    given!.index!.forEach((index, n) => {
+      near(curvatureFactor({ wireDiameter: 1, meanDiameter: index }), expected!.EN13906![n]!, 1e-6);
     });
   });
 

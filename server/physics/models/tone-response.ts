@@ -43,7 +43,12 @@ interface Steady {
 }
 
 /** All steady orbits of the device on a resistance, and the one that stands for them. */
-function steadyOrbits(device: Device, tone: Tone, resistance: number, constantCoupling: boolean): Steady {
+export function steadyOrbits(
+  device: Device,
+  tone: Tone,
+  resistance: number,
+  constantCoupling = hasConstantCoupling(device),
+): Steady {
   const open = !Number.isFinite(resistance);
   const linear = isMechanicallyLinear(device);
   if (linear && (open || constantCoupling)) {
