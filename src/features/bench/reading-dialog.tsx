@@ -76,7 +76,8 @@ export function ReadingDialog({
           form.setFocus('value');
         }
       } catch (error) {
-        applyIssues(form, error);
+        // The unit stands in the text of the reading.
+        applyIssues(form, error, { rename: (path) => (path === 'unit' || path === 'quantity' ? 'value' : path) });
       }
     });
 

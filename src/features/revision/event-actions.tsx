@@ -21,7 +21,7 @@ export function EventActions({ subject, beforeSend, onDone }: EventActionsProps)
   const { events } = useRevisionWay(subject.state);
   const [open, setOpen] = useState<RevisionEventType | null>(null);
   const { primary, beside, further } = chooseEvents(events, subject);
-  if (primary === null && further.length === 0) return null;
+  if (primary === null && beside.length === 0 && further.length === 0) return null;
   return (
     <>
       {further.length > 0 ? (

@@ -1,5 +1,5 @@
 import { useQueryClient } from '@tanstack/react-query';
-import { useEffect, useId, useRef, useState } from 'react';
+import { useId, useState } from 'react';
 import { useForm } from 'react-hook-form';
 import type { Remark, Revision } from '#contracts/revisions';
 import type { Change } from '#contracts/error';
@@ -38,12 +38,10 @@ export function EventDialog({ event, subject, onClose, onDone, beforeSend, remar
   const send = useSendEvent(subject.revisionId);
   const [pending, setPending] = useState(false);
   const [changed, setChanged] = useState<Change[] | null>(null);
-  // What the person sees is what is sent: a page refreshed behind the dialog does not slip under a signature.
-  const [held, setHeld] = useState({ version: subject.version, digest: subject.digest });
-  const latest = useRef(subject);
-  useEffect(() => {
-    latest.current = subject;
-  }, [subject]);
+  // What the person saw is what is sent: a page refreshed behind the dialog does not slip under a signature. Only after
+  // being told of a change, and asking for the current state, the dialog goes by that.
+  const [opened, setOpened] = useState<EventSubject | null>(subject);
+  const held = opened ?? subject;
   const form = useForm<EventFields>({
     defaultValues: { ...emptyFields, target: target ?? '', result: subject.readingsSay ?? '' },
   });
@@ -54,7 +52,7 @@ export function EventDialog({ event, subject, onClose, onDone, beforeSend, remar
 
   const takeOver = async () => {
     await client.invalidateQueries();
-    setHeld({ version: latest.current.version, digest: latest.current.digest });
+    setOpened(null);
     setChanged(null);
     form.clearErrors();
   };
@@ -62,7 +60,8 @@ export function EventDialog({ event, subject, onClose, onDone, beforeSend, remar
   const submit = form.handleSubmit(async (fields) => {
     setPending(true);
     try {
-      const read = readEvent(event, fields, { ...held, remarkId: remark?.id });
+      const { version, digest } = held;
+      const read = readEvent(event, fields, { version, digest, remarkId: remark?.id });
       if (!read.ok) {
         applyIssues(form, new RequestError(422, 'invalid', 'Not complete.', { issues: read.issues }));
         return;
