@@ -181,7 +181,7 @@ export function parseQuantity(text: string, dimension: Dimension, bareUnit = '')
     const bare = bareMultipliers[dimension];
     if (bare && bare.letters.test(unitText)) unitText = /[Rr]/.test(unitText) ? bare.unit : `${unitText}${bare.unit}`;
   }
-  if (unitText === '') unitText = bareUnit;
+  if (unitText === '') unitText = clean(bareUnit);
   if (/^[.\d]/.test(unitText) && !/^1\s*\//.test(unitText)) {
     return refuse(cleaned, dimension, 'digits parted by spaces or dots are not joined; write one number');
   }
