@@ -28,9 +28,12 @@ export function RunLines({ lines, onMeasure }: RunLinesProps) {
         <li key={line.requirement.id} className="sheet flex flex-col gap-2 p-4">
           <LineFigures line={line} />
           {onMeasure ? (
-            <Button className="min-h-12 w-full @2xl:min-h-10 @2xl:w-fit" onPress={() => onMeasure(line.requirement.id)}>
+            <Button
+              className="min-h-12 w-full @2xl:min-h-10 @2xl:w-fit"
+              aria-label={`Enter a reading for ${line.requirement.title}`}
+              onPress={() => onMeasure(line.requirement.id)}
+            >
               Enter a reading
-              <span className="sr-only"> for {line.requirement.title}</span>
             </Button>
           ) : null}
         </li>
