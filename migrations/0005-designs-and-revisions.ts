@@ -31,7 +31,7 @@ export async function up(db: Knex): Promise<void> {
       brief_version INTEGER,
       submitted_at TEXT,
       submitted_by_id TEXT REFERENCES people (id) ON DELETE RESTRICT,
-      continued_from_id TEXT UNIQUE REFERENCES revisions (id) ON DELETE RESTRICT,
+      continued_from_id TEXT REFERENCES revisions (id) ON DELETE RESTRICT,
       created_at TEXT NOT NULL,
       created_by_id TEXT NOT NULL REFERENCES people (id) ON DELETE RESTRICT,
       updated_at TEXT NOT NULL,

@@ -9,8 +9,17 @@ import type { Config } from './config';
 import { notFound, unavailable } from './errors';
 import { auditHandlers } from './features/audit/routes';
 import { authHandlers } from './features/auth/routes';
+import { briefHandlers } from './features/briefs/routes';
+import { catalogueHandlers } from './features/catalogue/routes';
+import { designHandlers } from './features/designs/routes';
+import { deskHandlers } from './features/desk/routes';
+import { estimateHandlers } from './features/estimates/routes';
+import { instrumentHandlers } from './features/instruments/routes';
 import { mailHandlers } from './features/mail/routes';
 import { peopleHandlers } from './features/people/routes';
+import { recordHandlers } from './features/records/routes';
+import { revisionHandlers } from './features/revisions/routes';
+import { runHandlers } from './features/runs/routes';
 import { contentPolicy } from './http/content-policy';
 import { csrfProtection } from './http/csrf';
 import { errorHandler } from './http/error-handler';
@@ -43,6 +52,15 @@ const handlersFor = (deps: Deps): Handlers => ({
   ...peopleHandlers(deps),
   ...auditHandlers(deps),
   ...mailHandlers(deps),
+  ...briefHandlers(deps),
+  ...designHandlers(deps),
+  ...revisionHandlers(deps),
+  ...estimateHandlers(deps),
+  ...runHandlers(deps),
+  ...instrumentHandlers(deps),
+  ...catalogueHandlers(),
+  ...recordHandlers(deps),
+  ...deskHandlers(deps),
 });
 
 /** Wires the whole server; listens to nothing. */

@@ -2,6 +2,7 @@ import type { Knex } from 'knex';
 import { z } from 'zod';
 import type { Change } from '#contracts/error';
 import type { Activity } from '#contracts/revisions';
+import type { RevisionState } from '#workflows/revision';
 import { AuditDetail } from '../audit';
 import type { AuditRow } from '../audit';
 
@@ -134,4 +135,47 @@ export async function changesSince(db: Knex, revisionId: string, version: number
     at: entry.at,
     what: capitalised(entry.phrase),
   }));
+}
+
+type PlacedRow = TrailRow & { letter: string; design_id: string; number: string; title: string };
+type Placed = Activity & { href: string; title: string };
+
+/**
+ * The latest of what happened to revisions, newest first. Saves of drafts are left out; for those who see releases only, so is
+ * everything about other revisions.
+ */
+export async function latestDeeds(db: Knex, states: readonly RevisionState[] | 'all', most: number): Promise<Placed[]> {
+  const rows = db('audit_entries')
+    .join('revisions', 'revisions.id', 'audit_entries.subject_id')
+    .join('designs', 'designs.id', 'revisions.design_id')
+    .leftJoin('people', 'people.id', 'audit_entries.actor_id')
+    .where({ subject: 'revision' })
+    .whereNotIn('action', ['savedDraft', 'tookReading', 'statedConditions'])
+    .orderBy('sequence', 'desc')
+    .limit(most)
+    .select<PlacedRow[]>(
+      'audit_entries.at',
+      'action',
+      'detail',
+      'actor_id',
+      'people.name',
+      'letter',
+      'design_id',
+      'designs.number',
+      'designs.title',
+    );
+  if (states !== 'all') rows.whereIn('revisions.state', [...states]);
+  return (await rows).flatMap(({ at, action, detail, actor_id, name, letter, design_id, number, title }) => {
+    if (!isDeed(action)) return [];
+    const phrase = phraseOf(action, AuditDetail.parse(JSON.parse(detail)), `${number} ${letter}`);
+    return [
+      {
+        at,
+        by: actor_id === null ? null : { id: actor_id, name: name ?? '' },
+        sentence: `${name ?? 'The server'} ${phrase}.`,
+        href: `/designs/${design_id}/${letter}`,
+        title: `${number} ${letter} · ${title}`,
+      },
+    ];
+  });
 }

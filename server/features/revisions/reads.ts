@@ -1,0 +1,2 @@
+export { digestOf, evidenceOf } from './evidence';
+export type { Evidence } from './evidence';
