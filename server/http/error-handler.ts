@@ -6,7 +6,7 @@ import { bodyLimit } from './body-limit';
 import { placeInJson } from './json-place';
 
 /** The one map from what went wrong to HTTP. What cannot be read or is too large is `invalid` like any other bad input. */
-export const statusOf: Record<ErrorCode, number> = {
+const statusOf: Record<ErrorCode, number> = {
   invalid: 422,
   unauthenticated: 401,
   forbidden: 403,

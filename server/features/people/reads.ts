@@ -6,10 +6,6 @@ export interface Contact extends PersonName {
   email: string;
 }
 
-/** Everybody who may sign in, by name. */
-export const activePeople = (db: Knex): Promise<Contact[]> =>
-  db('people').where({ active: 1 }).orderBy('name').select<Contact[]>('id', 'name', 'email');
-
 /** Everybody who holds the role and may sign in, by name. */
 export const peopleByRole = (db: Knex, role: Role): Promise<Contact[]> =>
   db('people')
