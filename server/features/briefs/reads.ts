@@ -15,7 +15,9 @@ export interface BriefAt {
 /** A brief as it stood at a version; as it stands now where `version` is null. */
 export async function briefAt(db: Knex, briefId: string, version: number | null): Promise<BriefAt> {
   const { id, number, ...current } = await loadBrief(db, briefId);
-  if (version === null || version === current.version) return { id, number, ...current };
+  if (version === null || version === current.version) {
+    return { id, number, version: current.version, document: current.document };
+  }
   const kept = await db('brief_versions')
     .where({ brief_id: briefId, version })
     .first<{ document: string } | undefined>();
