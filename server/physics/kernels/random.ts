@@ -1,3 +1,5 @@
+import { portableLog } from './portable';
+
 /**
  * Uniform numbers in [0, 1) from a 32-bit seed: the same sequence on every machine, integer arithmetic only.
  *
@@ -23,4 +25,28 @@ export function uniformRandom(seed: number): () => number {
   for (let n = 0; n < 12; n++) next();
   // 53 bits: 27 from one draw and 26 from the next
   return () => ((next() >>> 5) * 67108864 + (next() >>> 6)) / 9007199254740992;
+}
+
+/**
+ * Standard normal numbers from a uniform source, by the polar method; portable arithmetic, so the same everywhere.
+ * Source: Marsaglia & Bray, SIAM Rev. 6 (1964) 260.
+ */
+export function normalRandom(uniform: () => number): () => number {
+  let spare: number | null = null;
+  return () => {
+    if (spare !== null) {
+      const held = spare;
+      spare = null;
+      return held;
+    }
+    for (;;) {
+      const x = 2 * uniform() - 1;
+      const y = 2 * uniform() - 1;
+      const square = x * x + y * y;
+      if (square >= 1 || square < 1e-300) continue;
+      const scale = Math.sqrt((-2 * portableLog(square)) / square);
+      spare = y * scale;
+      return x * scale;
+    }
+  };
 }

@@ -125,6 +125,15 @@ export class Motion {
     this.carry();
   }
 
+  /** Clears sums and peaks; the motion goes on. */
+  openBooks(): void {
+    this.sums.fill(0);
+    this.peak = Math.abs(this.u);
+    this.emfPeak = Math.abs(this.emf);
+    this.touched = this.upper || this.lower;
+    this.steps = 0;
+  }
+
   /** Energy in mass, suspension, coil and capacitors, J. */
   energy(): number {
     const { mass, suspension, coilInductance } = this.device;

@@ -32,7 +32,46 @@ export interface PeriodicMotion {
   current: Float64Array;
 }
 
+/** A base acceleration that repeats. */
+export interface PeriodicDrive {
+  /** s. */
+  period: number;
+  /** A rate typical of the motion, rad/s. */
+  omega: number;
+  /** Points shown per period. */
+  points: number;
+  accelerationAt(t: number): number;
+}
+
 const POINTS = 256;
+/** Most points shown of a common period. */
+const MOST_POINTS = 4096;
+
+/** Tones that share a frequency of which all are whole multiples. */
+export function periodicDrive(tones: readonly Tone[], frequency: number): PeriodicDrive {
+  const parts = tones.map((tone) => ({
+    omega: 2 * Math.PI * tone.frequency,
+    size: tone.acceleration,
+    phase: tone.phase,
+  }));
+  const fastest = Math.max(...tones.map((tone) => tone.frequency));
+  const strongest = tones.reduce((best, tone) => (tone.acceleration > best.acceleration ? tone : best));
+  const only = parts[0]!;
+  return {
+    period: 1 / frequency,
+    omega: 2 * Math.PI * strongest.frequency,
+    points: Math.min(MOST_POINTS, POINTS * Math.round(fastest / frequency)),
+    accelerationAt:
+      parts.length === 1
+        ? (t) => only.size * Math.sin(only.omega * t + only.phase)
+        : (t) => {
+            let sum = 0;
+            for (const { omega, size, phase } of parts) sum += size * Math.sin(omega * t + phase);
+            return sum;
+          },
+  };
+}
+
 const MOST_ITERATIONS = 30;
 
 /**
@@ -47,16 +86,18 @@ const MOST_ITERATIONS = 30;
 export function shoot(
   device: Device,
   circuit: CircuitModel,
-  tone: Tone,
+  drive: PeriodicDrive,
   guess: PeriodStart,
   tolerance: number,
 ): PeriodicMotion {
-  const omega = 2 * Math.PI * tone.frequency;
-  const period = 1 / tone.frequency;
+  const { omega, period, points, accelerationAt } = drive;
   const n = 2 + circuit.capacitors;
-  const accelerationAt = (t: number): number => tone.acceleration * Math.sin(omega * t + tone.phase);
   const size = Math.max(Math.hypot(guess.u, guess.v / omega), 1e-12);
-  const motion = new Motion(device, circuit, accelerationAt, { tolerance, period, smallest: 0.5 * size });
+  const motion = new Motion(device, circuit, accelerationAt, {
+    tolerance,
+    period: (2 * Math.PI) / omega,
+    smallest: 0.5 * size,
+  });
   const scale = Float64Array.from({ length: n }, (_, k) => (k === 0 ? size : k === 1 ? omega * size : 1));
   for (let c = 0; c < circuit.capacitors; c++) scale[2 + c] = Math.max(Math.abs(guess.voltage[c]!), 1e-2);
   let current = guess.current;
@@ -68,9 +109,9 @@ export function shoot(
     for (let c = 0; c < circuit.capacitors; c++) out[2 + c] = motion.voltage[c]!;
   };
   const run = (each?: (k: number) => void): boolean => {
-    for (let k = 1; k <= POINTS; k++) {
+    for (let k = 1; k <= points; k++) {
       each?.(k - 1);
-      if (!motion.advance((period * k) / POINTS, period / POINTS)) return false;
+      if (!motion.advance((period * k) / points, period / points)) return false;
     }
     return true;
   };
@@ -137,7 +178,7 @@ export function shoot(
   }
   place(z, current);
   const before = motion.energy();
-  const series = (): Float64Array => new Float64Array(POINTS);
+  const series = (): Float64Array => new Float64Array(points);
   const [displacement, emf, loadVoltage, coil] = [series(), series(), series(), series()];
   const finite = run((k) => {
     displacement[k] = motion.u;
@@ -163,7 +204,7 @@ export function shoot(
     stored: (motion.energy() - before) / period,
     displacementPeak: motion.peak,
     touched: motion.touched,
-    time: Float64Array.from({ length: POINTS }, (_, k) => (period * k) / POINTS),
+    time: Float64Array.from({ length: points }, (_, k) => (period * k) / points),
     displacement,
     emf,
     loadVoltage,

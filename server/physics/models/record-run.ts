@@ -12,6 +12,8 @@ export interface Excitation {
   corners: number;
   /** A size of the acceleration, m/s². */
   size: number;
+  /** Time that is run through before the books are opened, s; the excitation must be known from −settling on. */
+  settling?: number;
 }
 
 /** What a record did to a device; powers and squares are means over it. SI. */
@@ -82,6 +84,13 @@ export function runRecord(
     0,
     circuit?.kind === 'supercapacitor' ? [circuit.initialVoltage] : [0, 0].slice(0, model.capacitors),
   );
+  let completed = true;
+  if (excitation.settling) {
+    const { u, v, current, voltage } = motion;
+    motion.place(-excitation.settling, u, v, current, [...voltage]);
+    completed = motion.advance(0, (2 * Math.PI) / own / 16);
+    motion.openBooks();
+  }
   const before = motion.energy();
   const shown = Math.min(SHOWN, Number.isFinite(corners) ? Math.round(duration / corners) + 1 : SHOWN);
   const every = duration / (shown - 1);
@@ -97,7 +106,6 @@ export function runRecord(
   show(0);
   let taken = 1;
   let corner = 1;
-  let completed = true;
   const switches = node && capacitor && node.activeCurrent !== node.sleepCurrent ? switchings(node) : null;
   let nextSwitch = switches ? switches.next().value : { t: Infinity, demand: 0 };
   const longest = Math.min((2 * Math.PI) / own / 16, every);

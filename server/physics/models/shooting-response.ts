@@ -5,8 +5,8 @@ import type { Circuit, Device, DeviceResponse, Tone, Waveforms } from './device'
 import { Motion } from './motion';
 import { refinedPeak } from './orbit-figures';
 import { isMechanicallyLinear } from './oscillator';
-import { shoot } from './periodic-motion';
-import type { PeriodicMotion, PeriodStart } from './periodic-motion';
+import { periodicDrive, shoot } from './periodic-motion';
+import type { PeriodicDrive, PeriodicMotion, PeriodStart } from './periodic-motion';
 import { balancedVoltage, sinusoidalStart } from './rectified-start';
 import { phaseOf, rangeNotes, steadyOrbits } from './tone-response';
 
@@ -45,21 +45,28 @@ function startsFromOrbits(device: Device, circuit: CircuitModel, tone: Tone, res
 }
 
 /** Lets a start run for some periods. */
-function settled(device: Device, circuit: CircuitModel, tone: Tone, start: PeriodStart, periods: number): PeriodStart {
-  const omega = 2 * Math.PI * tone.frequency;
-  const size = tone.acceleration / (omega * omega) + Math.abs(start.u);
-  const motion = new Motion(device, circuit, (t) => tone.acceleration * Math.sin(omega * t + tone.phase), {
+function settled(
+  device: Device,
+  circuit: CircuitModel,
+  drive: PeriodicDrive,
+  start: PeriodStart,
+  periods: number,
+): PeriodStart {
+  const { omega, period, accelerationAt } = drive;
+  let size = Math.hypot(start.u, start.v / omega);
+  for (let n = 0; n < 16; n++) size = Math.max(size, Math.abs(accelerationAt((n * period) / 16)) / (omega * omega));
+  const motion = new Motion(device, circuit, accelerationAt, {
     tolerance: 1e-6,
-    period: 1 / tone.frequency,
+    period: (2 * Math.PI) / omega,
     smallest: 0.1 * size,
   });
   motion.place(0, start.u, start.v, start.current, start.voltage);
-  if (!motion.advance(periods / tone.frequency, 0.02 / tone.frequency)) return start;
+  if (!motion.advance(periods * period, (0.04 * Math.PI) / omega)) return start;
   return { u: motion.u, v: motion.v, current: motion.current, voltage: [...motion.voltage] };
 }
 
 /** Every place to start shooting from. */
-function startsFor(device: Device, circuit: CircuitModel, tone: Tone): PeriodStart[] {
+function startsFor(device: Device, circuit: CircuitModel, tone: Tone, drive: PeriodicDrive): PeriodStart[] {
   const { stops, restPosition } = device;
   const linear = isMechanicallyLinear({ ...device, stops: null });
   const starts: PeriodStart[] = [];
@@ -90,9 +97,9 @@ function startsFor(device: Device, circuit: CircuitModel, tone: Tone): PeriodSta
   });
   return [
     ...bounded,
-    settled(device, circuit, tone, zero, 4 * SETTLING),
-    ...bounded.map((start) => settled(device, circuit, tone, start, SETTLING)),
-    ...thrown.map((start) => settled(device, circuit, tone, start, SETTLING)),
+    settled(device, circuit, drive, zero, 4 * SETTLING),
+    ...bounded.map((start) => settled(device, circuit, drive, start, SETTLING)),
+    ...thrown.map((start) => settled(device, circuit, drive, start, SETTLING)),
   ];
 }
 
@@ -102,12 +109,23 @@ function matchedResistance(device: Device): number {
   return device.coilResistance + (theta * theta) / device.damping;
 }
 
-/** All periodic motions that shooting reaches, by size. */
-function periodicMotions(device: Device, circuit: CircuitModel, tone: Tone): PeriodicMotion[] {
-  const omega = 2 * Math.PI * tone.frequency;
+/** All motions of the common period that shooting reaches, by size. */
+function periodicMotions(
+  device: Device,
+  circuit: CircuitModel,
+  tones: readonly Tone[],
+  frequency: number,
+): PeriodicMotion[] {
+  const drive = periodicDrive(tones, frequency);
+  const { omega } = drive;
   const found: PeriodicMotion[] = [];
-  for (const start of startsFor(device, circuit, tone)) {
-    const motion = shoot(device, circuit, tone, start, TOLERANCE);
+  const strongest = tones.reduce((best, tone) => (tone.acceleration > best.acceleration ? tone : best));
+  const starts = startsFor(device, circuit, strongest, drive);
+  // what several tones do together is only known after a while of it
+  const several = tones.length > 1;
+  for (const first of starts) {
+    const start = several ? settled(device, circuit, drive, first, decayPeriods(device, drive.period)) : first;
+    const motion = shoot(device, circuit, drive, start, TOLERANCE);
     if (!motion.converged) continue;
     const size = motion.displacementPeak;
     const known = found.some(
@@ -118,6 +136,11 @@ function periodicMotions(device: Device, circuit: CircuitModel, tone: Tone): Per
     if (!known) found.push(motion);
   }
   return found.sort((a, b) => a.displacementPeak - b.displacementPeak);
+}
+
+/** Periods in which a free motion all but dies, at most 100. */
+function decayPeriods(device: Device, period: number): number {
+  return Math.ceil(Math.min(100, (6 * device.mass) / (device.damping * period)));
 }
 
 /** Fundamental (cos, sin) and rms of the harmonics above it. */
@@ -161,13 +184,14 @@ export function modelNote(circuit: Circuit): string[] {
 }
 
 /**
- * Steady response to a tone where stops or a rectifying circuit make the equations switch: shooting from several starts.
+ * Steady response to a tone, or to tones with a common frequency (Hz) of which all are whole multiples, where stops or a rectifying circuit make the equations switch: shooting from several starts.
  * A motion that never repeats is not averaged into figures: the answer says so.
  */
-export function respondToToneByShooting(device: Device, tone: Tone): DeviceResponse {
+export function respondToPeriodByShooting(device: Device, tones: readonly Tone[], frequency: number): DeviceResponse {
   const circuit = circuitModel(device.circuit);
-  const motions = periodicMotions(device, circuit, tone);
-  const open = openFigures(device, tone);
+  const motions = periodicMotions(device, circuit, tones, frequency);
+  const open = openFigures(device, tones, frequency);
+  const tone = tones.length === 1 ? tones[0]! : null;
   const stable = motions.find((motion) => motion.stable);
   const headline = stable ?? motions[0] ?? null;
   const notes = [...modelNote(device.circuit), ...open.notes];
@@ -183,6 +207,7 @@ export function respondToToneByShooting(device: Device, tone: Tone): DeviceRespo
     notes.push(
       'Responses were sought from several starts; more may exist, and only those that repeat every period of the tone are listed.',
     );
+  if (!tone) notes.push('Phase and harmonic distortion are not computed, because the vibration is not a single tone.');
   notes.push(...rangeNotes(device, headline));
   const coil = headline && device.coilResistance * headline.mean.current2;
   const emf = headline && harmonicsOf(headline.emf);
@@ -202,8 +227,8 @@ export function respondToToneByShooting(device: Device, tone: Tone): DeviceRespo
       loadPower: headline?.mean.load ?? null,
       displacementPeak: headline?.displacementPeak ?? null,
       displacementRms: headline && Math.sqrt(headline.mean.displacement2),
-      phase: displaced && phaseOf({ displacement: Float64Array.of(0, displaced.cosine, displaced.sine) }, tone),
-      harmonicDistortion: distorted ? emf.above / first : null,
+      phase: tone && displaced && phaseOf({ displacement: Float64Array.of(0, displaced.cosine, displaced.sine) }, tone),
+      harmonicDistortion: tone && distorted ? emf.above / first : null,
       stopContact: device.stops && headline ? headline.touched : null,
       branches: motions.map((motion) => ({
         displacementPeak: motion.displacementPeak,
@@ -235,19 +260,19 @@ function balance(motion: PeriodicMotion, coil: number): number {
 }
 
 /** EMF with the circuit open. */
-export function openFigures(device: Device, tone: Tone): { rms: number | null; peak: number | null; notes: string[] } {
-  if (device.stops === null) {
-    const { headline } = steadyOrbits(device, tone, Infinity);
+export function openFigures(
+  device: Device,
+  tones: readonly Tone[],
+  frequency: number,
+): { rms: number | null; peak: number | null; notes: string[] } {
+  if (device.stops === null && tones.length === 1) {
+    const { headline } = steadyOrbits(device, tones[0]!, Infinity);
     if (!headline) return { rms: null, peak: null, notes: ['No steady response with the circuit open was found.'] };
     const samples = openEmf(device, headline);
-    return {
-      rms: Math.sqrt(samples.reduce((sum, e) => sum + e * e, 0) / samples.length),
-      peak: refinedPeak(samples),
-      notes: [],
-    };
+    const square = samples.reduce((sum, e) => sum + e * e, 0) / samples.length;
+    return { rms: Math.sqrt(square), peak: refinedPeak(samples), notes: [] };
   }
-  const circuit = circuitModel(null);
-  const motions = periodicMotions({ ...device, coilInductance: 0 }, circuit, tone);
+  const motions = periodicMotions({ ...device, coilInductance: 0 }, circuitModel(null), tones, frequency);
   const headline = motions.find((motion) => motion.stable) ?? null;
   if (!headline)
     return { rms: null, peak: null, notes: ['Open-circuit EMF is not computed, because no steady motion was found.'] };
