@@ -56,11 +56,18 @@ function levitatedSuspension(
   };
 }
 
+/** Farthest position that a document takes, m. */
+const farthest = 10;
+
 function suspensionOf(document: DesignDocument, mass: number): RestingSuspension {
   const { suspension, axisAngle } = document;
   switch (suspension.kind) {
-    case 'spring':
-      return springSuspension(suspension, mass, axisAngle);
+    case 'spring': {
+      const { stiffness, cubic, neutralAt } = suspension;
+      // Below the last bit of the linear force over all the travel that a document can have, it is nothing
+      const felt = Math.abs(cubic) * farthest ** 2 > Number.EPSILON * Math.abs(stiffness);
+      return springSuspension({ stiffness, cubic: felt ? cubic : 0, neutralAt }, mass, axisAngle);
+    }
     case 'helical': {
       const stiffness = suspension.springs * springRate(suspension);
       return springSuspension({ stiffness, cubic: 0, neutralAt: suspension.neutralAt }, mass, axisAngle);
