@@ -139,15 +139,9 @@ export const PositionAxis = memo(function PositionAxis({ domain, layout, rest, s
     ...(rest !== null ? [{ at: rest, text: 'rest' }] : []),
     ...stops.map(({ at }) => ({ at, text: 'stop' })),
   ].filter(({ at }) => at >= domain.from && at <= domain.to);
-  let taken = -Infinity;
-  const words = [...marks]
-    .sort((a, b) => a.at - b.at)
-    .map((mark) => {
-      const px = layout.x(mark.at);
-      const fits = px - 13 > taken;
-      if (fits) taken = px + 13;
-      return { ...mark, px, fits };
-    });
+  const placed = [...marks].sort((a, b) => a.at - b.at).map((mark) => ({ ...mark, px: layout.x(mark.at) }));
+  // A word that would run into the one before it is left out; its mark stays.
+  const words = placed.map((mark, index) => ({ ...mark, fits: mark.px - (placed[index - 1]?.px ?? -Infinity) > 26 }));
   return (
     <g>
       <line x1={layout.left} x2={layout.right} y1={y} y2={y} className="stroke-graphite" strokeWidth={1.2} />

@@ -143,13 +143,13 @@ class Reader {
   }
 
   triple(path: Key[]): Triple | null {
-    const [x, y, z] = [0, 1, 2].map((axis) => this.mm([...path, axis]));
-    return x == null || y == null || z == null ? null : [x, y, z];
+    const [x = null, y = null, z = null] = [0, 1, 2].map((axis) => this.mm([...path, axis]));
+    return x === null || y === null || z === null ? null : [x, y, z];
   }
 
   pair(path: Key[]): [number, number] | null {
-    const [x, y] = [0, 1].map((axis) => this.mm([...path, axis]));
-    return x == null || y == null ? null : [x, y];
+    const [x = null, y = null] = [0, 1].map((axis) => this.mm([...path, axis]));
+    return x === null || y === null ? null : [x, y];
   }
 }
 

@@ -1,0 +1,71 @@
+import { useSlow } from '../../ui/pending';
+import { Button } from '../../ui/button';
+import { Status } from '../../ui/status';
+import type { Freshness } from './live-estimate';
+
+interface FreshnessProps {
+  freshness: Freshness;
+  /** Whether any figures are on the page. */
+  shown: boolean;
+  /** Names of the fields that are wrong. */
+  wrong: readonly { path: string; label: string }[];
+  failure?: string | undefined;
+  onRetry: () => void;
+}
+
+const names = (wrong: FreshnessProps['wrong']) => wrong.slice(0, 3);
+
+/** Says to what state of the fields the figures belong; nothing where that is the present one. */
+export function FreshnessWords({ freshness, shown, wrong, failure, onRetry }: FreshnessProps) {
+  if (freshness === 'current') return null;
+  if (freshness === 'none' || freshness === 'computing') return <Computing shown={shown} />;
+  if (freshness === 'failed')
+    return (
+      <div className="flex flex-col items-start gap-1.5">
+        <Status tone="attention">{shown ? 'previous figures' : 'no figures'}</Status>
+        <p className="text-sm text-graphite">{failure ?? 'The server did not answer.'} It is tried again by itself.</p>
+        <Button size="small" onPress={onRetry}>
+          Compute again now
+        </Button>
+      </div>
+    );
+  return (
+    <div className="flex flex-col gap-0.5">
+      <Status tone="bad">{shown ? 'figures of the last valid state' : 'cannot be computed yet'}</Status>
+      <p className="text-sm">
+        {wrong.length === 0 ? (
+          'The document cannot be computed as it stands.'
+        ) : (
+          <>
+            {names(wrong).map(({ path, label }, index) => (
+              <span key={path}>
+                {index > 0 ? ', ' : ''}
+                <a href={`#field-${path}`} className="link">
+                  {label}
+                </a>
+              </span>
+            ))}
+            {wrong.length > 3 ? ` and ${wrong.length - 3} more` : ''} {wrong.length === 1 ? 'is' : 'are'} wrong.
+          </>
+        )}
+      </p>
+    </div>
+  );
+}
+
+/** Quick answers pass without a word; only what takes a moment is said. */
+function Computing({ shown }: { shown: boolean }) {
+  const slow = useSlow(150);
+  if (!slow) return <span className="text-sm">&nbsp;</span>;
+  return <span className="text-sm text-amber">{shown ? 'previous figures – computing' : 'computing'}</span>;
+}
+
+/** The same in a word or two; null where the figures are the present ones. */
+export const freshnessInAWord = (freshness: Freshness): string | null =>
+  ({
+    current: null,
+    none: 'computing',
+    computing: 'computing',
+    faulty: 'last valid state',
+    failed: 'previous figures',
+  })[freshness];
