@@ -6,7 +6,7 @@ import type { Knex } from 'knex';
 import type { Logger } from 'pino';
 import { allRoutes } from '#contracts/routes';
 import type { Config } from './config';
-import { notFound, unavailable } from './errors';
+import { notFound } from './errors';
 import { auditHandlers } from './features/audit/routes';
 import { authHandlers } from './features/auth/routes';
 import { briefHandlers } from './features/briefs/routes';
@@ -40,13 +40,7 @@ export interface Deps {
   now: () => Date;
 }
 
-/** Stand-ins until every feature is there; goes when the last feature is spread below. */
-const notYet = Object.fromEntries(
-  Object.keys(allRoutes).map((name) => [name, () => Promise.reject(unavailable('This part is not there yet.'))]),
-) as unknown as Handlers;
-
 const handlersFor = (deps: Deps): Handlers => ({
-  ...notYet,
   ...systemHandlers(deps),
   ...authHandlers(deps),
   ...peopleHandlers(deps),

@@ -2,7 +2,7 @@ import { randomBytes } from 'node:crypto';
 import { PersonCreate } from '#contracts/people';
 import type { Deps } from '../app';
 import { ConfigError, loadConfig } from '../config';
-import { migrateToLatest } from '../db';
+import { migrateToLatest, openDatabase } from '../db';
 import { closeDeps, openDeps } from '../deps';
 import { createPerson } from '../features/people/service';
 import { plainWords } from '../http/issues';
@@ -45,10 +45,16 @@ async function addFirstAdministrator(deps: Deps, environment: NodeJS.ProcessEnv)
  * real one, the first administrator.
  */
 export async function setUp(environment: NodeJS.ProcessEnv, { demo }: { demo: boolean }): Promise<void> {
-  const deps = openDeps(loadConfig(environment));
+  const config = loadConfig(environment);
+  const db = openDatabase(config.databaseFile);
+  const isEmpty = await migrateToLatest(db)
+    .then(() => db('people').first('id'))
+    .then((anybody) => anybody === undefined)
+    .finally(() => db.destroy());
+  if (!isEmpty) return;
+  // The worker threads are started for this alone, not for a look at whether there is anything to do.
+  const deps = openDeps(config);
   try {
-    await migrateToLatest(deps.db);
-    if ((await deps.db('people').first('id')) !== undefined) return;
     if (!demo) {
       await addFirstAdministrator(deps, environment);
       return;
