@@ -12,11 +12,15 @@ export interface HermiteTable {
   valueAt(x: number): number;
   slopeAt(x: number): number;
   integralAt(x: number): number;
+  /** Writes integral, value, slope and curvature at x into out[0..3]. */
+  allAt(x: number, out: Float64Array): void;
 }
 
 export interface HermiteTableOptions {
   /** Error allowed, relative to the largest value. */
   readonly tolerance: number;
+  /** Magnitude that stands for the largest value, where the caller knows a better one than this range shows. */
+  readonly scale?: number;
   /** Places inside the range where the function turns sharply; panels begin there. */
   readonly breaks?: readonly number[];
   /** Panels to begin with, before any is halved. */
@@ -62,7 +66,7 @@ export function hermiteTable(
   const middles = first.slice(1).map((node, i) => take(0.5 * (first[i]!.x + node.x)));
   let peak = 0;
   for (const node of [...first, ...middles]) peak = Math.max(peak, Math.abs(node.sample[1]!));
-  const allowed = options.tolerance * peak;
+  const allowed = options.tolerance * (options.scale ?? peak);
 
   const nodes: Node[] = [first[0]!];
   const refine = (left: Node, middle: Node, right: Node, depth: number): void => {
@@ -139,11 +143,32 @@ function fromNodes(nodes: readonly Node[], peak: number): HermiteTable {
     while (i < panels - 1 && x >= edge[i + 1]!) i++;
     return i;
   };
+  const integralAt = (x: number): number => {
+    const i = panelAt(x);
+    const h = 1 / inverse[i]!;
+    const t = (x - edge[i]!) * inverse[i]!;
+    const j = 6 * i;
+    const mean =
+      c[j]! +
+      t * (c[j + 1]! / 2 + t * (c[j + 2]! / 3 + t * (c[j + 3]! / 4 + t * (c[j + 4]! / 5 + (t * c[j + 5]!) / 6))));
+    return start[i]! + h * t * mean;
+  };
   return {
     from,
     to,
     peak,
     panels,
+    integralAt,
+    allAt: (x, out) => {
+      const i = panelAt(x);
+      const k = inverse[i]!;
+      const t = (x - edge[i]!) * k;
+      const j = 6 * i;
+      out[0] = integralAt(x);
+      out[1] = c[j]! + t * (c[j + 1]! + t * (c[j + 2]! + t * (c[j + 3]! + t * (c[j + 4]! + t * c[j + 5]!))));
+      out[2] = k * (c[j + 1]! + t * (2 * c[j + 2]! + t * (3 * c[j + 3]! + t * (4 * c[j + 4]! + t * 5 * c[j + 5]!))));
+      out[3] = k * k * (2 * c[j + 2]! + t * (6 * c[j + 3]! + t * (12 * c[j + 4]! + t * 20 * c[j + 5]!)));
+    },
     valueAt: (x) => {
       const i = panelAt(x);
       const t = (x - edge[i]!) * inverse[i]!;
@@ -157,16 +182,6 @@ function fromNodes(nodes: readonly Node[], peak: number): HermiteTable {
       return (
         inverse[i]! * (c[j + 1]! + t * (2 * c[j + 2]! + t * (3 * c[j + 3]! + t * (4 * c[j + 4]! + t * 5 * c[j + 5]!))))
       );
-    },
-    integralAt: (x) => {
-      const i = panelAt(x);
-      const h = 1 / inverse[i]!;
-      const t = (x - edge[i]!) * inverse[i]!;
-      const j = 6 * i;
-      const mean =
-        c[j]! +
-        t * (c[j + 1]! / 2 + t * (c[j + 2]! / 3 + t * (c[j + 3]! / 4 + t * (c[j + 4]! / 5 + (t * c[j + 5]!) / 6))));
-      return start[i]! + h * t * mean;
     },
   };
 }

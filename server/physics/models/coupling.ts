@@ -1,10 +1,13 @@
 import { hermiteTable } from '../kernels/hermite-table';
 import { monotoneCubic, monotoneCubicAt, monotoneCubicSlopeAt } from '../kernels/pchip';
+import { acrossLinkage } from './across-coupling';
+import type { FlatMagnet } from './across-coupling';
 import { axialMagnetsOf } from './axial-magnet';
 import type { CoilShape } from './coil';
 import { LINKAGE_TERMS } from './linkage';
 import type { Linkage } from './linkage';
 import type { Magnet } from './magnet';
+import { magnetisationOf } from './magnetisation';
 import { misalignedLinkage } from './misalignment';
 import { axialLinkage } from './through-coupling';
 import type { AxialCoil } from './through-coupling';
@@ -46,12 +49,21 @@ const TABLE_TOLERANCE = 1e-9;
  * @throws RangeError where the layout does not take the shape of a magnet or coil
  */
 export function linkageOfDesign(design: MagneticDesign): Linkage {
+  if (design.layout === 'across') return acrossLinkage(flatMagnetsOf(design), design.coils);
   const magnets = axialMagnetsOf(design.magnets, 'magnets', design.temperature, design.recoil ?? true);
   const coils = axialCoilsOf(design);
   const misalignment = design.misalignment;
   return misalignment && (misalignment.offset !== 0 || misalignment.tilt !== 0)
     ? misalignedLinkage(magnets, coils, misalignment)
     : axialLinkage(magnets, coils);
+}
+
+function flatMagnetsOf(design: MagneticDesign): FlatMagnet[] {
+  return design.magnets.map((magnet, i) => {
+    if (magnet.shape !== 'block') throw new RangeError(`magnets.${i}.shape must be block in the across layout`);
+    const magnetisation = magnetisationOf(magnet, design.temperature, design.recoil ?? true);
+    return { size: magnet.size, at: magnet.at, magnetisation };
+  });
 }
 
 function axialCoilsOf(design: MagneticDesign): AxialCoil[] {
