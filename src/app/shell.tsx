@@ -40,7 +40,7 @@ export function Component() {
       </a>
       <Travelling />
       <div className="flex min-h-dvh flex-col min-[900px]:flex-row">
-        <div
+        <header
           data-no-print
           className="sticky top-0 hidden h-dvh w-49 shrink-0 flex-col border-r border-rule px-3 pt-4 pb-3 min-[900px]:flex"
         >
@@ -49,8 +49,8 @@ export function Component() {
           <div className="mt-auto border-t border-rule pt-2">
             <PersonMenu me={me} placement="top start" />
           </div>
-        </div>
-        <div
+        </header>
+        <header
           data-no-print
           className="sticky top-0 z-30 flex items-center gap-2 border-b border-rule bg-paper px-2.5 py-1.5 min-[900px]:hidden"
         >
@@ -59,7 +59,7 @@ export function Component() {
           <span className="ml-auto">
             <PersonMenu me={me} placement="bottom end" compact />
           </span>
-        </div>
+        </header>
         <main id="main" ref={main} tabIndex={-1} className="min-w-0 flex-1 outline-none">
           <Suspense
             fallback={

@@ -38,7 +38,7 @@ const parts = [
 const math = create(Object.assign({}, ...parts) as FactoryFunctionMap);
 
 // mathjs reads g as gram; in an acceleration it is standard gravity.
-math.createUnit('standardgravity', '9.80665 m/s^2');
+math.createUnit({ standardgravity: { definition: '9.80665 m/s^2', prefixes: 'short' } });
 math.createUnit('thou', '25.4 um');
 
 const spelling = (text: string, dimension: Dimension): string => {

@@ -6,7 +6,7 @@ export type { Dimension, QuantityReading } from '#contracts/quantity';
 export { formatQuantity, parseQuantity, quantityParts } from '#contracts/quantity';
 
 /** Signs of arithmetic, where the text is not one plain quantity: `12 mm/2`, `2*(3 mm + 0.5 in)`. */
-const arithmetic = /[-+*/×·()^]/;
+const arithmetic = /[-−+*/×·()^]/;
 
 /**
  * Reads what was typed at once. `pending` says that the text holds arithmetic, which `readQuantityFully` can work out.
@@ -25,7 +25,10 @@ export async function readQuantityFully(
 ): Promise<QuantityReading> {
   const reading = readQuantity(text, dimension, bareUnit);
   if (reading !== 'pending') return reading;
-  const { calculate } = await import('./calculator');
+  const calculator = await import('./calculator').catch(() => null);
+  if (calculator === null)
+    return { ok: false, message: `“${text.trim()}” needs the calculator, which could not be loaded: type the result.` };
+  const { calculate } = calculator;
   const result = calculate(text, dimension);
   if (result.kind === 'number') return parseQuantity(String(result.value), dimension, bareUnit);
   if (result.kind === 'quantity') return { ok: true, value: result.value };

@@ -11,7 +11,7 @@ export function Component() {
       <PageBody className="flex max-w-2xl flex-col items-start gap-4">
         <p>
           Nothing is kept under <code className="wrap-anywhere">{pathname}</code>. The address may be mistyped, or what
-          it led to has been abandoned and moved.
+          it led to no longer exists.
         </p>
         <p className="text-graphite">Nothing was lost. The rail leads to everything you may enter.</p>
         <ButtonLink to="/" variant="primary">

@@ -28,4 +28,6 @@ export const textOf = (value: CellValue): string =>
 
 /** A value as it is drawn where the column does not say otherwise. */
 export const defaultCell = (value: CellValue): ReactNode =>
-  typeof value === 'number' ? formatNumber(value, Number.isInteger(value) ? 15 : 3) : textOf(value) || '–';
+  typeof value === 'number'
+    ? formatNumber(value, Number.isInteger(value) ? String(Math.abs(value)).length : 3)
+    : textOf(value) || '–';

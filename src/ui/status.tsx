@@ -16,7 +16,7 @@ function Shape({ tone }: { tone: Tone }) {
   return (
     <svg
       viewBox="0 0 12 12"
-      className="size-[0.8em] shrink-0 fill-current stroke-current"
+      className="size-[0.8em] shrink-0 translate-y-[0.06em] fill-current stroke-current"
       strokeWidth={1.8}
       aria-hidden
     >
@@ -38,7 +38,7 @@ export interface StatusProps {
 /** A state in one word, with shape and colour. */
 export function Status({ tone, children, className }: StatusProps) {
   return (
-    <span className={classNames('inline-flex items-center gap-1.5 font-semibold', colours[tone], className)}>
+    <span className={classNames('inline-flex items-baseline gap-1.5 font-semibold', colours[tone], className)}>
       <Shape tone={tone} />
       <span>{children}</span>
     </span>
