@@ -20,7 +20,7 @@ const millimetres = (value: number): string => `${round(value * 1000)} mm`;
 
 /**
  * A starting point for a brief: the reference device, made smaller where the envelope asks for it, its spring tuned to the
- * strongest tone, its load matched to coil and damping.
+ * strongest tone, its load matched to coil and damping, with stops where it would else reach the wall.
  */
 export async function starterFor(
   { estimator, log }: Pick<Deps, 'estimator' | 'log'>,
@@ -33,8 +33,10 @@ export async function starterFor(
   const magnetMass = (Math.PI / 4) * magnet ** 3 * neodymiumDensity;
   // A spring assembly needs some mass besides its magnet; half of the limit is left for coil and housing.
   const mass = Math.max(1.2 * magnetMass, Math.min(reference.mass * size ** 3, (brief.massLimit ?? Infinity) / 2));
+  // The magnet travels half of what the envelope leaves beside it, less a millimetre of wall at each end.
+  const travel = Math.max((length - magnet) / 2 - 0.001, magnet / 10);
   const frequency = mainTone(brief.vibration) ?? 50;
-  const document = (resistance: number): Record<string, unknown> => ({
+  const document = (resistance: number, stopped: boolean): Record<string, unknown> => ({
     format: designFormat,
     title,
     layout: 'through',
@@ -71,13 +73,20 @@ export async function starterFor(
       neutralAt: '0 mm',
     },
     damping: { quality: 150 },
-    stops: null,
+    stops: stopped
+      ? { lower: millimetres(-travel), upper: millimetres(travel), stiffness: '50 kN/m', damping: '2 N*s/m' }
+      : null,
     circuit: { kind: 'resistor', resistance: `${round(resistance)} ohm` },
   });
-  const first = document(reference.loadResistance);
+  const first = document(reference.loadResistance, false);
   try {
-    const { bounds } = await estimator.estimate({ design: first, vibration: brief.vibration, quietArrays: true });
-    return bounds.bestResistiveLoad === null ? first : document(bounds.bestResistiveLoad);
+    const { bounds, response } = await estimator.estimate({
+      design: first,
+      vibration: brief.vibration,
+      quietArrays: true,
+    });
+    const reachesWall = response.displacementPeak === null || response.displacementPeak > travel;
+    return document(bounds.bestResistiveLoad ?? reference.loadResistance, reachesWall);
   } catch (error) {
     // The design is a draft in any case; its page tells what keeps it from being estimated.
     log.warn({ err: error }, 'A starting point was not matched to its load');
