@@ -87,6 +87,18 @@ export const signatureMeaning: Record<SignedEvent, string> = {
   recall: 'I recall this release for the reason stated.',
 };
 
+/** What a signature did, after the person's name. */
+export const signedWords: Record<SignedEvent, string> = {
+  approve: 'approved',
+  signResult: 'signed the result',
+  grantConcession: 'granted a concession',
+  release: 'released',
+  recall: 'recalled',
+};
+/** A signature is kept with its event's name; only signed events ever have one. */
+export const signedWordsOf = (event: RevisionEventType): string =>
+  event in signedWords ? signedWords[event as SignedEvent] : eventWords[event].toLowerCase();
+
 export const roles = ['designer', 'reviewer', 'bench', 'releaseAuthority', 'administrator', 'observer'] as const;
 export const Role = z.enum(roles);
 export type Role = z.infer<typeof Role>;
