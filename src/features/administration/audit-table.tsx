@@ -10,6 +10,22 @@ import { ErrorState } from '../../ui/error-state';
 import { Pending } from '../../ui/pending';
 import { auditQuery } from './queries';
 
+const words = (value: unknown): string =>
+  typeof value === 'string' || typeof value === 'number' || typeof value === 'boolean'
+    ? String(value)
+    : JSON.stringify(value);
+const cut = (text: string, most: number) => (text.length > most ? `${text.slice(0, most)}…` : text);
+
+/** The detail in one line; what it is about stands in its own column. */
+const summaryOf = (detail: AuditEntry['detail']): string =>
+  cut(
+    Object.entries(detail)
+      .filter(([key, value]) => key !== 'name' && value !== null && !/Id$|^digest$/.test(key))
+      .map(([key, value]) => `${key} ${cut(words(value), 48)}`)
+      .join(', ') || Object.keys(detail).join(', '),
+    110,
+  );
+
 const hasDetail = (detail: AuditEntry['detail']) => Object.keys(detail).length > 0;
 
 const columns: readonly TableColumn<AuditEntry>[] = [
@@ -24,15 +40,26 @@ const columns: readonly TableColumn<AuditEntry>[] = [
       </time>
     ),
   },
-  { id: 'by', title: 'Who', value: ({ by }) => by?.name ?? 'the server' },
+  {
+    id: 'by',
+    title: 'Who',
+    value: ({ by }) => by?.name ?? 'the server',
+    cell: ({ by }) => <span className="whitespace-nowrap">{by?.name ?? 'the server'}</span>,
+  },
   { id: 'action', title: 'What', value: ({ action }) => action, cell: ({ action }) => <code>{action}</code> },
   {
     id: 'subject',
     title: 'On what',
-    value: ({ subject, subjectId }) => `${subject} ${subjectId}`,
-    cell: ({ subject, subjectId }) => (
+    value: ({ subject, subjectId, detail }) =>
+      [subject, typeof detail.name === 'string' ? detail.name : '', subjectId].filter(Boolean).join(' '),
+    cell: ({ subject, subjectId, detail }) => (
       <span title={subjectId}>
-        {subject} <code className="text-sm text-graphite">{subjectId.slice(0, 8)}</code>
+        {subject}{' '}
+        {typeof detail.name === 'string' ? (
+          detail.name
+        ) : (
+          <code className="text-sm text-graphite">{subjectId.slice(0, 8)}</code>
+        )}
       </span>
     ),
   },
@@ -41,12 +68,10 @@ const columns: readonly TableColumn<AuditEntry>[] = [
     title: 'Detail',
     value: ({ detail }) => (hasDetail(detail) ? JSON.stringify(detail) : null),
     unsortable: true,
-    cell: ({ detail, sequence }) =>
+    cell: ({ detail }) =>
       hasDetail(detail) ? (
         <details>
-          <summary aria-label={`Detail of entry ${sequence}`} className="text-graphite">
-            {Object.keys(detail).join(', ')}
-          </summary>
+          <summary className="text-graphite">{summaryOf(detail)}</summary>
           <pre className="max-w-[60ch] text-sm wrap-anywhere whitespace-pre-wrap">
             {JSON.stringify(detail, null, 2)}
           </pre>

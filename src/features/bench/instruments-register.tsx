@@ -67,6 +67,7 @@ export function InstrumentsRegister({ instruments, mayChange }: RegisterProps) {
               cell: (instrument) => (
                 <Button
                   size="small"
+                  className="-my-1.5"
                   variant="quiet"
                   aria-label={`Change ${instrument.number}`}
                   onPress={() => setOpen(instrument)}

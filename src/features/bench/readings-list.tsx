@@ -97,8 +97,8 @@ function ReadingItem({ reading, title, onStrike }: ReadingItemProps) {
           {struck ? <Status tone="bad">struck through</Status> : null}
         </p>
         <p className="text-sm wrap-anywhere text-graphite">
-          {quantityWords(quantity)}, with <span className="font-mono">{instrument.number}</span> {instrument.name};{' '}
-          {by.name},{' '}
+          {quantityWords(quantity) === title ? 'With' : `${quantityWords(quantity)}, with`}{' '}
+          <span className="font-mono">{instrument.number}</span> {instrument.name}; {by.name},{' '}
           <time dateTime={at} title={formatDateTime(at)}>
             {formatAgo(at)}
           </time>

@@ -46,6 +46,7 @@ function LineFigures({ line: { requirement, estimated, measured, margin, reading
   const { dimension } = requirementQuantities[requirement.quantity];
   const unit = requirement.unit === '' ? {} : { unit: requirement.unit };
   const relative = margin !== null && requirement.limit !== 0 ? margin / Math.abs(requirement.limit) : null;
+  const ofEstimate = measured !== null && estimated !== null && estimated !== 0 ? measured / estimated : null;
   return (
     <>
       <div className="flex items-baseline justify-between gap-3">
@@ -82,7 +83,8 @@ function LineFigures({ line: { requirement, estimated, measured, margin, reading
           <>
             Margin <Quantity value={margin} dimension={dimension} {...unit} signed className="text-ink" />
             {relative === null ? null : ` (${relative > 0 ? '+' : ''}${formatPercent(relative)})`}, mean of{' '}
-            {formatCount(readings, 'reading')}.
+            {formatCount(readings, 'reading')}
+            {ofEstimate === null ? '.' : `; ${formatPercent(ofEstimate)} of the estimate.`}
           </>
         )}
       </p>

@@ -81,7 +81,7 @@ export function BriefEditor({ brief, header, saveLabel, save, onSaved }: BriefEd
       )}
       <PageBody className="flex flex-col gap-5">
         {restored && draft.found ? (
-          <Caution severity="info" title="Text that was not saved is shown." className="max-w-5xl">
+          <Caution severity="info" title="Text that was not saved is shown." className="max-w-6xl">
             It was written on this device {formatAgo(draft.found.at)}.{' '}
             <Button size="small" onPress={startAgain}>
               Discard it
@@ -116,7 +116,7 @@ interface StaleBriefProps {
 /** Somebody saved in the meantime: says what, and asks whose text is to hold. */
 function StaleBrief({ changed, brief, onMine, onTheirs }: StaleBriefProps) {
   return (
-    <div role="alert" className="flex max-w-5xl flex-col items-start gap-2 border-l-4 border-amber bg-wash px-4 py-3">
+    <div role="alert" className="flex max-w-6xl flex-col items-start gap-2 border-l-4 border-amber bg-wash px-4 py-3">
       <h2>Somebody changed this brief while you wrote</h2>
       <ul className="list-disc pl-5">
         {changed.map((change) => (

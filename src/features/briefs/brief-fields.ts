@@ -62,6 +62,9 @@ export const unitInText = (text: string): string =>
     .replace(/^[+−-]?(\d+\.?\d*|\.\d+)(?:[eE][+−-]?\d+)?(?:\s*[×x*·]\s*10\s*\^\s*[+−-]?\d+)?/, '')
     .trim();
 
+/** A large count as people write it: 1e9 and not a row of zeros to count. */
+const countText = (value: number): string => (value < 1e6 ? String(value) : value.toExponential().replace('e+', 'e'));
+
 /** An SI value as somebody would type it, losing nothing: 0.0013 W is “1.3 mW”. */
 export function typed(value: number | null, dimension: Dimension, unit?: string): string {
   if (value === null) return '';
@@ -137,7 +140,7 @@ export function briefFields(document: BriefDocument): BriefFields {
       lowest: typed(document.temperature.lowest, 'temperature'),
       highest: typed(document.temperature.highest, 'temperature'),
     },
-    lifeCycles: document.lifeCycles === null ? '' : String(document.lifeCycles),
+    lifeCycles: document.lifeCycles === null ? '' : countText(document.lifeCycles),
     orientation: document.orientation,
     requirements: document.requirements.map(requirementFields),
     notes: document.notes,

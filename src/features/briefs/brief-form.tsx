@@ -47,7 +47,7 @@ export function useBriefForm(
 export function BriefForm({ id, form, onSubmit }: BriefFormProps) {
   const { control } = form;
   return (
-    <Form id={id} onSubmit={onSubmit} label="Brief" className="@container max-w-5xl gap-7">
+    <Form id={id} onSubmit={onSubmit} label="Brief" className="@container max-w-6xl gap-7">
       <FormError message={form.formState.errors.root?.message} />
       <FieldGroup title="What and where">
         <div className="grid gap-x-4 gap-y-3 @xl:grid-cols-2">

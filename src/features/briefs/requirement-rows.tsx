@@ -63,7 +63,7 @@ function RequirementRow({ form, index, onRemove }: RowProps) {
     <div
       role="group"
       aria-label={`Requirement ${index + 1}`}
-      className="grid grid-cols-2 items-start gap-x-3 gap-y-2 border-b border-rule pb-3 @3xl:grid-cols-[3fr_3fr_8.5rem_2fr_2fr_auto]"
+      className="grid grid-cols-2 items-start gap-x-3 gap-y-2 border-b border-rule pb-3 @3xl:grid-cols-[minmax(0,3fr)_minmax(0,3fr)_7.75rem_minmax(0,2fr)_12rem_auto]"
     >
       <FormField control={control} name={`requirements.${index}.quantity`}>
         {(bind) => (

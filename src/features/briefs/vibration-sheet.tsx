@@ -1,6 +1,7 @@
 import { useMemo } from 'react';
 import { parseQuantity } from '../../lib/quantities';
-import { KeyFigures } from '../../ui/key-figures';
+import { DataTable } from '../../ui/data-table';
+import type { TableColumn } from '../../ui/data-table';
 import { Plot } from '../../ui/plot';
 import { Quantity } from '../../ui/quantity';
 import { densityUnitWords, vibrationFields } from './vibration-fields';
@@ -11,25 +12,80 @@ const si = (text: string, dimension: 'frequency' | 'acceleration' | 'angle' | 't
   return reading.ok ? reading.value : null;
 };
 
+interface ToneRow {
+  key: string;
+  frequency: number | null;
+  acceleration: number | null;
+  as: 'peak' | 'rms';
+  phase: number | null;
+}
+
+/** Of a sine: speed is acceleration over ω, displacement over ω². */
+const speedOf = ({ frequency, acceleration }: ToneRow) =>
+  frequency === null || acceleration === null ? null : acceleration / (2 * Math.PI * frequency);
+const displacementOf = ({ frequency, acceleration }: ToneRow) =>
+  frequency === null || acceleration === null ? null : acceleration / (2 * Math.PI * frequency) ** 2;
+
+const toneColumns: readonly TableColumn<ToneRow>[] = [
+  {
+    id: 'frequency',
+    title: 'Frequency',
+    align: 'end',
+    value: ({ frequency }) => frequency,
+    cell: ({ frequency }) => <Quantity value={frequency} dimension="frequency" />,
+  },
+  {
+    id: 'acceleration',
+    title: 'Acceleration',
+    align: 'end',
+    value: ({ acceleration }) => acceleration,
+    cell: ({ acceleration, as }) => <Quantity value={acceleration} dimension="acceleration" after={as} />,
+  },
+  {
+    id: 'gravity',
+    title: 'in g',
+    align: 'end',
+    value: ({ acceleration }) => acceleration,
+    cell: ({ acceleration, as }) => <Quantity value={acceleration} dimension="acceleration" unit="g" after={as} />,
+  },
+  {
+    id: 'speed',
+    title: 'Speed',
+    align: 'end',
+    value: speedOf,
+    cell: (tone) => <Quantity value={speedOf(tone)} dimension="speed" after={tone.as} />,
+  },
+  {
+    id: 'displacement',
+    title: 'Displacement',
+    align: 'end',
+    value: displacementOf,
+    cell: (tone) => <Quantity value={displacementOf(tone)} dimension="length" after={tone.as} />,
+  },
+];
+const phaseColumn: TableColumn<ToneRow> = {
+  id: 'phase',
+  title: 'Phase',
+  align: 'end',
+  value: ({ phase }) => phase,
+  cell: ({ phase }) => <Quantity value={phase} dimension="angle" />,
+};
+
 function Tones({ tones }: { tones: readonly ToneFields[] }) {
+  const rows = tones.map((tone, index): ToneRow => ({
+    key: String(index),
+    frequency: si(tone.frequency, 'frequency', 'Hz'),
+    acceleration: si(tone.acceleration, 'acceleration', 'm/s^2'),
+    as: tone.as,
+    phase: si(tone.phase, 'angle', 'deg'),
+  }));
   return (
-    <KeyFigures
-      ruled
-      figures={tones.map((tone, index) => ({
-        key: String(index),
-        label: <Quantity value={si(tone.frequency, 'frequency', 'Hz')} dimension="frequency" className="text-ink" />,
-        value: (
-          <>
-            <Quantity value={si(tone.acceleration, 'acceleration', 'm/s²')} dimension="acceleration" after={tone.as} />
-            {tones.length > 1 ? (
-              <>
-                {' '}
-                at <Quantity value={si(tone.phase, 'angle', 'deg')} dimension="angle" />
-              </>
-            ) : null}
-          </>
-        ),
-      }))}
+    <DataTable
+      plain
+      label="Tones"
+      rows={rows}
+      columns={tones.length > 1 ? [...toneColumns, phaseColumn] : toneColumns}
+      rowKey={({ key }) => key}
     />
   );
 }

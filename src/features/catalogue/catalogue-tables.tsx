@@ -27,6 +27,18 @@ const columnUnits: Partial<Record<Dimension, string>> = {
   perKelvin: '%/K',
 };
 
+/** Heads short enough for a column; the export and the column choice keep the full words where there are none. */
+const shortTitles: Record<string, string> = {
+  'Remanence at 20 °C': 'Remanence',
+  'Recoil permeability': 'Recoil',
+  'Remanence over temperature': 'Remanence drift',
+  'Intrinsic coercivity, least': 'Coercivity',
+  'Coercivity over temperature': 'Coercivity drift',
+  'Highest temperature': 'Hottest',
+};
+/** Shown on demand: they say more than choosing needs. */
+const further = new Set(['Remanence, lowest', 'Remanence, highest', 'Coercivity over temperature']);
+
 const isDimension = (name: string): name is Dimension => name in dimensions;
 
 function propertyColumn(label: string, dimensionName: string): TableColumn<CatalogueEntry> {
@@ -36,7 +48,8 @@ function propertyColumn(label: string, dimensionName: string): TableColumn<Catal
   const found = (entry: CatalogueEntry) => entry.properties.find((property) => property.label === label)?.value ?? null;
   return {
     id: label.toLowerCase().replace(/[^a-z0-9]+/g, '-'),
-    title: label,
+    title: shortTitles[label] ?? label,
+    hidden: further.has(label),
     ...(unit === undefined ? {} : { unit }),
     align: 'end',
     value: (entry) => {
@@ -66,7 +79,7 @@ function columnsOf(entries: readonly CatalogueEntry[], key: string): TableColumn
       id: 'source',
       title: 'Source',
       value: ({ source }) => source,
-      cell: ({ source }) => <span className="block min-w-56 text-sm text-graphite">{source}</span>,
+      cell: ({ source }) => <span className="block min-w-80 text-sm text-graphite">{source}</span>,
     },
   ];
 }

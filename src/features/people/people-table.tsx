@@ -4,6 +4,7 @@ import type { Person } from '#contracts/people';
 import { roleWords } from '#workflows/revision';
 import { formatAgo, formatDate, formatDateTime } from '../../lib/format';
 import { Button } from '../../ui/button';
+import { Section } from '../../ui/page-header';
 import { DataTable } from '../../ui/data-table';
 import type { TableColumn } from '../../ui/data-table';
 import { Status } from '../../ui/status';
@@ -70,6 +71,7 @@ export function PeopleTable({ people, meId }: { people: readonly Person[]; meId:
         cell: (person) => (
           <Button
             size="small"
+            className="-my-1.5"
             variant="quiet"
             aria-label={`Change ${person.name}`}
             onPress={() => setChangingId(person.id)}
@@ -83,19 +85,27 @@ export function PeopleTable({ people, meId }: { people: readonly Person[]; meId:
   );
   return (
     <>
-      <DataTable
-        label="People"
-        rows={people}
-        columns={withButton}
-        rowKey={({ id }) => id}
-        filterLabel="Find a person"
-        initialSort={{ column: 'name' }}
-        toolbar={
+      <Section
+        title="People"
+        aside={
           <Button variant="primary" icon={Plus} onPress={() => setAdding(true)}>
             Add a person
           </Button>
         }
-      />
+      >
+        <p className="max-w-prose text-graphite">
+          One person may hold several roles. Who wrote or edited a revision never decides on it, whatever the roles.
+          Nobody sees a password but its owner.
+        </p>
+        <DataTable
+          label="People"
+          rows={people}
+          columns={withButton}
+          rowKey={({ id }) => id}
+          filterLabel="Find a person"
+          initialSort={{ column: 'name' }}
+        />
+      </Section>
       {adding ? <AddPersonDialog onClose={() => setAdding(false)} /> : null}
       {changing ? (
         <ChangePersonDialog

@@ -1,14 +1,9 @@
 import type { Dossier } from '#contracts/records';
-import { comparisonSign, requirementQuantities, verdictWords } from '#contracts/requirement';
-import type { Verdict } from '#contracts/requirement';
-import type { RunLine } from '#contracts/runs';
 import { formatCount } from '../../lib/format';
-import { Quantity } from '../../ui/quantity';
 import { Status } from '../../ui/status';
-import type { Tone } from '../../ui/status';
+import { RequirementLine } from './requirement-line';
 
 type DossierRun = Dossier['runs'][number];
-const tones: Record<Verdict, Tone> = { meets: 'good', marginal: 'attention', fails: 'bad', notComputed: 'neutral' };
 
 /** The bench evidence of a release: each run with its lines, and what was unusual about its readings. */
 export function DossierRuns({ runs }: { runs: readonly DossierRun[] }) {
@@ -28,7 +23,18 @@ export function DossierRuns({ runs }: { runs: readonly DossierRun[] }) {
           </p>
           <ul className="flex flex-col">
             {run.lines.map((line) => (
-              <LineItem key={line.requirement.id} line={line} />
+              <RequirementLine
+                key={line.requirement.id}
+                requirement={line.requirement}
+                shown={{
+                  words: 'measured',
+                  value: line.measured,
+                  absent: 'not measured',
+                  after: <span className="text-sm text-graphite"> ({formatCount(line.readings, 'reading')})</span>,
+                }}
+                margin={line.margin}
+                verdict={line.verdict}
+              />
             ))}
           </ul>
           <ReadingNotes run={run} />
@@ -38,29 +44,6 @@ export function DossierRuns({ runs }: { runs: readonly DossierRun[] }) {
         </li>
       ))}
     </ul>
-  );
-}
-
-function LineItem({ line: { requirement, measured, readings, margin, verdict } }: { line: RunLine }) {
-  const { dimension } = requirementQuantities[requirement.quantity];
-  const unit = requirement.unit === '' ? {} : { unit: requirement.unit };
-  return (
-    <li className="flex flex-wrap items-baseline gap-x-3 border-b border-rule py-1">
-      <span className="font-medium">{requirement.title}</span>
-      <span>
-        {comparisonSign[requirement.comparison]} <Quantity value={requirement.limit} dimension={dimension} {...unit} />
-      </span>
-      <span className="ml-auto">
-        measured <Quantity value={measured} dimension={dimension} {...unit} absent="not measured" />
-        {margin === null ? null : (
-          <>
-            , margin <Quantity value={margin} dimension={dimension} {...unit} signed />
-          </>
-        )}{' '}
-        <span className="text-graphite">({formatCount(readings, 'reading')})</span>
-      </span>
-      <Status tone={tones[verdict]}>{verdict === 'notComputed' ? 'not measured' : verdictWords[verdict]}</Status>
-    </li>
   );
 }
 

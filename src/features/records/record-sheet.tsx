@@ -1,22 +1,15 @@
 import type { ReactNode } from 'react';
 import type { ReleaseRecord } from '#contracts/records';
-import { comparisonSign, estimateMargins, requirementQuantities, verdictWords } from '#contracts/requirement';
-import type { Margin, Requirement } from '#contracts/requirement';
-import { eventWords } from '#workflows/revision';
+import { estimateMargins } from '#contracts/requirement';
+import type { Margin } from '#contracts/requirement';
+import { signedWordsOf } from '#workflows/revision';
 import { formatCount, formatDateTime } from '../../lib/format';
 import { Caution } from '../../ui/caution';
 import { KeyFigures } from '../../ui/key-figures';
 import { Quantity } from '../../ui/quantity';
 import { Status } from '../../ui/status';
-import type { Tone } from '../../ui/status';
 import { DossierRuns } from './dossier-runs';
-
-const tones: Record<Margin['verdict'], Tone> = {
-  meets: 'good',
-  marginal: 'attention',
-  fails: 'bad',
-  notComputed: 'neutral',
-};
+import { RequirementLine } from './requirement-line';
 
 function Part({ title, children }: { title: string; children: ReactNode }) {
   return (
@@ -30,63 +23,20 @@ function Part({ title, children }: { title: string; children: ReactNode }) {
 /** A time as it is signed: in UTC, with the second, whoever reads it wherever. */
 export const utc = (time: string): string => `${time.slice(0, 10)} ${time.slice(11, 19)} UTC`;
 
-function Limit({ requirement }: { requirement: Requirement }) {
-  const { dimension } = requirementQuantities[requirement.quantity];
-  return (
-    <>
-      {comparisonSign[requirement.comparison]}{' '}
-      <Quantity
-        value={requirement.limit}
-        dimension={dimension}
-        {...(requirement.unit === '' ? {} : { unit: requirement.unit })}
-      />
-    </>
-  );
-}
-
-const cell = 'border-b border-rule py-1 pr-3 align-top last:pr-0';
-
 function Margins({ margins }: { margins: readonly Margin[] }) {
   if (margins.length === 0) return <p className="text-graphite">The brief asks for nothing that an estimate shows.</p>;
   return (
-    <div className="overflow-x-auto" role="region" aria-label="Estimate against the brief" tabIndex={0}>
-      <table className="w-full min-w-120 text-left">
-        <thead>
-          <tr className="text-sm">
-            {['Requirement', 'Limit', 'Estimate', 'Margin', ''].map((title) => (
-              <th key={title} scope="col" className={cell}>
-                {title === '' ? <span className="sr-only">Verdict</span> : title}
-              </th>
-            ))}
-          </tr>
-        </thead>
-        <tbody>
-          {margins.map(({ requirement, value, margin, verdict }) => {
-            const { dimension } = requirementQuantities[requirement.quantity];
-            const unit = requirement.unit === '' ? {} : { unit: requirement.unit };
-            return (
-              <tr key={requirement.id}>
-                <th scope="row" className={`${cell} font-medium`}>
-                  {requirement.title}
-                </th>
-                <td className={cell}>
-                  <Limit requirement={requirement} />
-                </td>
-                <td className={cell}>
-                  <Quantity value={value} dimension={dimension} {...unit} />
-                </td>
-                <td className={cell}>
-                  <Quantity value={margin} dimension={dimension} {...unit} signed absent="–" />
-                </td>
-                <td className={cell}>
-                  <Status tone={tones[verdict]}>{verdictWords[verdict]}</Status>
-                </td>
-              </tr>
-            );
-          })}
-        </tbody>
-      </table>
-    </div>
+    <ul>
+      {margins.map(({ requirement, value, margin, verdict }) => (
+        <RequirementLine
+          key={requirement.id}
+          requirement={requirement}
+          shown={{ words: 'estimate', value, absent: 'not computed' }}
+          margin={margin}
+          verdict={verdict}
+        />
+      ))}
+    </ul>
   );
 }
 
@@ -164,7 +114,7 @@ export function RecordSheet({ record, strip }: RecordSheetProps) {
               <p>
                 <span className="font-semibold">{signature.by.name}</span>
                 <span className="block text-sm text-graphite">
-                  {eventWords[signature.event].toLowerCase()}
+                  {signedWordsOf(signature.event)}
                   <br />
                   {utc(signature.at)}
                 </span>

@@ -1,7 +1,7 @@
 import { MessageSquarePlus } from 'lucide-react';
 import { useState } from 'react';
 import type { Remark, Revision, Signature } from '#contracts/revisions';
-import { eventWords } from '#workflows/revision';
+import { eventWords, signedWordsOf } from '#workflows/revision';
 import { formatAgo, formatCount, formatDateTime } from '../../lib/format';
 import { ActionButton } from '../../ui/action-button';
 import { Button } from '../../ui/button';
@@ -196,7 +196,7 @@ function SignatureItem({ signature: { by, at, event, meaning, statement, digest 
       <p className="flex flex-wrap items-baseline gap-x-3">
         <span className="font-semibold">{by.name}</span>
         <span className="text-sm text-graphite">
-          {eventWords[event].toLowerCase()}, <time dateTime={at}>{formatDateTime(at)}</time>
+          {signedWordsOf(event)}, <time dateTime={at}>{formatDateTime(at)}</time>
         </span>
       </p>
       <p className="text-graphite">“{meaning}”</p>
