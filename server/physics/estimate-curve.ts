@@ -1,3 +1,5 @@
+import { hermiteTable } from './kernels/hermite-table';
+import type { HermiteTable } from './kernels/hermite-table';
 import { LINKAGE_TERMS } from './models/linkage';
 import type { Linkage } from './models/linkage';
 import type { PreparedDevice } from './estimate-device';
@@ -52,30 +54,42 @@ function turningPoint(linkage: Linkage, low: number, high: number, out: Float64A
   return x;
 }
 
+/** Error of what is drawn, relative to the largest coupling: below what a screen shows and a document asks for. */
+const drawnTolerance = 2e-7;
+
+/** The curve over everything that is drawn and everywhere that the peak may be. */
+function drawnTable(linkage: Linkage, rest: number, half: number): HermiteTable {
+  return hermiteTable((x, out) => linkage.at(x, out), rest - half, rest + half, {
+    tolerance: drawnTolerance,
+    breaks: linkage.passages,
+  });
+}
+
 /** Largest |θ| over all travel, and where: of equal peaks the one nearest to rest, then the one on the + side. */
-function peakOfLinkage(linkage: Linkage, rest: number, reach: number): { value: number; at: number } {
-  const steps = 160;
-  const out = new Float64Array(LINKAGE_TERMS);
+function peakOfLinkage(linkage: Linkage, table: HermiteTable, rest: number): { value: number; at: number } {
+  const steps = 800;
   const size = new Float64Array(steps + 1);
-  const at = (index: number): number => rest + reach * ((2 * index) / steps - 1);
-  for (let index = 0; index <= steps; index += 1) {
-    linkage.at(at(index), out);
-    size[index] = Math.abs(out[1] ?? 0);
-  }
+  const half = (table.to - table.from) / 2;
+  const at = (index: number): number => rest + half * ((2 * index) / steps - 1);
   let largest = 0;
-  for (const value of size) largest = Math.max(largest, value);
+  for (let index = 0; index <= steps; index += 1) {
+    const value = Math.abs(table.valueAt(at(index)));
+    size[index] = value;
+    largest = Math.max(largest, value);
+  }
+  const out = new Float64Array(LINKAGE_TERMS);
   let best = { value: 0, at: rest };
   for (let index = 1; index < steps; index += 1) {
     const here = size[index] ?? 0;
-    // A peak of the samples below this cannot hold the largest between them
-    if (here < 0.8 * largest || here < (size[index - 1] ?? 0) || here < (size[index + 1] ?? 0)) continue;
+    // What the samples miss between two of them is far less than this
+    if (here < 0.98 * largest || here < (size[index - 1] ?? 0) || here <= (size[index + 1] ?? 0)) continue;
     const x = turningPoint(linkage, at(index - 1), at(index + 1), out);
     linkage.at(x, out);
     const value = Math.abs(out[1] ?? 0);
     const equal = Math.abs(value - best.value) <= 1e-9 * value;
     const nearer = Math.abs(x - rest) - Math.abs(best.at - rest);
-    if (equal ? nearer < -1e-9 * reach || (nearer < 1e-9 * reach && x > best.at) : value > best.value)
-      best = { value, at: x };
+    const wins = equal ? nearer < -1e-9 * half || (nearer < 1e-9 * half && x > best.at) : value > best.value;
+    if (wins) best = { value, at: x };
   }
   return best;
 }
@@ -100,36 +114,34 @@ function peakOfTable(prepared: PreparedDevice): { value: number; at: number } {
  * Evaluates the coupling curve.
  *
  * @param positions where asked for (m); those of `shownPositions` otherwise
- * @param exact true evaluates each position by itself, false takes the table where it reaches
+ * @param exact true evaluates each position by itself, false draws it within 2e-7 of the peak
  */
 export function curveOf(prepared: PreparedDevice, positions: Float64Array, exact: boolean): EstimateCurve {
   const { device, linkage, reach } = prepared;
+  const { restPosition, coupling: table } = device;
   const fluxLinkage = new Float64Array(positions.length);
   const coupling = new Float64Array(positions.length);
-  const out = new Float64Array(LINKAGE_TERMS);
-  positions.forEach((x, index) => {
-    const tabulated = x >= device.coupling.from && x <= device.coupling.to;
-    if (linkage && (exact || !tabulated)) {
-      linkage.at(x, out);
-      fluxLinkage[index] = out[0] ?? 0;
-      coupling[index] = out[1] ?? 0;
-    } else {
-      fluxLinkage[index] = device.coupling.fluxAt(x);
-      coupling[index] = device.coupling.at(x);
-    }
-  });
-  let atRest = device.coupling.at(device.restPosition);
-  if (linkage) {
-    linkage.at(device.restPosition, out);
-    atRest = out[1] ?? 0;
+  if (linkage === null) {
+    positions.forEach((x, index) => {
+      fluxLinkage[index] = table.fluxAt(x);
+      coupling[index] = table.at(x);
+    });
+    const { value, at } = peakOfTable(prepared);
+    const couplingAtRest = table.at(restPosition);
+    return { position: positions, fluxLinkage, coupling, couplingAtRest, couplingPeak: value, couplingPeakAt: at };
   }
-  const peak = linkage ? peakOfLinkage(linkage, device.restPosition, reach) : peakOfTable(prepared);
-  return {
-    position: positions,
-    fluxLinkage,
-    coupling,
-    couplingAtRest: atRest,
-    couplingPeak: peak.value,
-    couplingPeakAt: peak.at,
-  };
+  const out = new Float64Array(LINKAGE_TERMS);
+  let half = reach;
+  if (!exact) for (const x of positions) half = Math.max(half, Math.abs(x - restPosition));
+  const drawn = drawnTable(linkage, restPosition, half);
+  positions.forEach((x, index) => {
+    if (exact) linkage.at(x, out);
+    else drawn.allAt(x, out);
+    fluxLinkage[index] = out[0] ?? 0;
+    coupling[index] = out[1] ?? 0;
+  });
+  linkage.at(restPosition, out);
+  const couplingAtRest = out[1] ?? 0;
+  const { value, at } = peakOfLinkage(linkage, drawn, restPosition);
+  return { position: positions, fluxLinkage, coupling, couplingAtRest, couplingPeak: value, couplingPeakAt: at };
 }
