@@ -1,7 +1,7 @@
 import { existsSync, readFileSync } from 'node:fs';
 import { createRequire } from 'node:module';
 import { chromium } from 'playwright-core';
-import type { Browser, BrowserContext, Page } from 'playwright-core';
+import type { Browser, BrowserContext, BrowserContextOptions, Page } from 'playwright-core';
 
 const axeSource = readFileSync(createRequire(import.meta.url).resolve('axe-core/axe.min.js'), 'utf8');
 
@@ -28,9 +28,16 @@ export async function launchBrowser(): Promise<Browser> {
 
 export type Theme = 'light' | 'dark';
 
-/** A fresh profile in one theme and size. */
-export const openContext = (browser: Browser, theme: Theme, width: number, height = 900): Promise<BrowserContext> =>
+/** A fresh profile in one theme and size; `storageState` starts it with the cookies of another. */
+export const openContext = (
+  browser: Browser,
+  theme: Theme,
+  width: number,
+  height = 900,
+  storageState?: BrowserContextOptions['storageState'],
+): Promise<BrowserContext> =>
   browser.newContext({
+    ...(storageState ? { storageState } : {}),
     colorScheme: theme,
     viewport: { width, height },
     reducedMotion: 'reduce',
@@ -48,7 +55,8 @@ export function watchErrors(page: Page, expected: readonly RegExp[] = []): strin
     if (!expected.some((pattern) => pattern.test(text))) errors.push(text);
   };
   page.on('console', (message) => {
-    if (message.type() === 'error' || message.type() === 'warning') keep(`${message.text()} (${message.location().url})`);
+    if (message.type() === 'error' || message.type() === 'warning')
+      keep(`${message.text()} (${message.location().url})`);
   });
   page.on('pageerror', (error) => keep(String(error)));
   return errors;
@@ -71,6 +79,8 @@ export async function axeViolations(page: Page): Promise<string[]> {
 /** Waits until nothing is loading: no request under way and no pending mark on screen. */
 export async function settled(page: Page): Promise<void> {
   await page.waitForLoadState('networkidle');
-  await page.waitForFunction(() => document.querySelector('[aria-busy="true"]') === null, undefined, { timeout: 15_000 });
+  await page.waitForFunction(() => document.querySelector('[aria-busy="true"]') === null, undefined, {
+    timeout: 15_000,
+  });
   await page.evaluate(() => document.fonts.ready);
 }
