@@ -185,6 +185,7 @@ function RevisionScreen({ revision, letters, document, onChange, saved, beforeSe
     <FreshnessWords
       {...{ freshness, wrong }}
       shown={estimate !== null}
+      calm={estimate?.response.method ?? ''}
       failure={live.failed?.message}
       onRetry={live.again}
     />

@@ -10,11 +10,11 @@ const kindOf = (value: unknown): CircuitKind =>
 
 const circuitWords: Record<CircuitKind, string> = {
   resistor: 'resistor',
-  bridge: 'bridge and capacitor',
-  doubler: 'voltage doubler',
-  store: 'store at constant voltage',
-  tracker: 'tracking converter',
-  supercapacitor: 'supercapacitor and node',
+  bridge: 'bridge',
+  doubler: 'doubler',
+  store: 'store',
+  tracker: 'tracker',
+  supercapacitor: 'supercapacitor',
 };
 
 /** A diode of the catalogue, its Shockley parameters, or a fixed drop. */

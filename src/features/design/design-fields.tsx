@@ -15,8 +15,8 @@ function LayoutGroup() {
         path="layout"
         label="Magnets pass"
         choices={[
-          { value: 'through', label: 'through the coils' },
-          { value: 'across', label: 'across their faces' },
+          { value: 'through', label: 'through coils' },
+          { value: 'across', label: 'across faces' },
         ]}
         read={() => layoutOf(document)}
         onChoose={(to) => change(changeLayout(document, shelf, to))}

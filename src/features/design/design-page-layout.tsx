@@ -20,11 +20,13 @@ export function DesignPageLayout({ notices, bar, fields, strip, results, figures
   const pane = '@[1000px]:sticky @[1000px]:top-0 @[1000px]:max-h-dvh @[1000px]:self-start @[1000px]:overflow-y-auto';
   return (
     <div className="@container">
-      {notices ? <div className="flex flex-col gap-2.5 border-b border-rule px-4 py-3 sm:px-6">{notices}</div> : null}
+      {notices ? (
+        <div className="flex flex-col gap-2.5 border-b border-rule px-4 py-3 empty:hidden sm:px-6">{notices}</div>
+      ) : null}
       <div className="sticky top-12 z-20 border-b border-rule bg-paper px-4 py-1.5 min-[900px]:top-0 @[720px]:hidden">
         {bar}
       </div>
-      <div className="flex flex-col @[720px]:grid @[720px]:grid-cols-[17rem_minmax(0,1fr)] @[1000px]:grid-cols-[17rem_minmax(0,1fr)_17rem] @[1700px]:grid-cols-[20rem_minmax(0,1fr)_22rem]">
+      <div className="flex flex-col @[720px]:grid @[720px]:grid-cols-[18rem_minmax(0,1fr)] @[1000px]:grid-cols-[18rem_minmax(0,1fr)_18rem] @[1150px]:grid-cols-[20rem_minmax(0,1fr)_19rem] @[1800px]:grid-cols-[22rem_minmax(0,1fr)_24rem]">
         <section
           aria-label="Design document"
           className="order-3 border-rule px-4 py-5 @[720px]:order-none @[720px]:row-span-2 @[720px]:border-r"

@@ -48,7 +48,7 @@ export function CylinderFields({ path }: { path: string }) {
       <QuantityAt path={`${path}.innerDiameter`} kind="cylinder" label="Bore" />
       <QuantityAt path={`${path}.length`} kind="cylinder" />
       <QuantityAt path={`${path}.at`} kind="cylinder" label="Position" />
-      <SignAt path={`${path}.polarity`} label="North pole" positive="right, towards +x" negative="left, towards −x" />
+      <SignAt path={`${path}.polarity`} label="North pole" positive="right (+x)" negative="left (−x)" />
       <MaterialAt path={`${path}.material`} />
     </>
   );
@@ -63,7 +63,7 @@ function BlockFields({ path }: { path: string }) {
       <QuantityAt path={`${path}.at.0`} kind="block" label="Position x" />
       <QuantityAt path={`${path}.at.1`} kind="block" label="Position y" />
       <QuantityAt path={`${path}.at.2`} kind="block" label="Height z" />
-      <SignAt path={`${path}.polarity`} label="North pole" positive="up, away from z = 0" negative="down" />
+      <SignAt path={`${path}.polarity`} label="North pole" positive="up (+z)" negative="down (−z)" />
       <MaterialAt path={`${path}.material`} />
     </>
   );

@@ -32,13 +32,17 @@ export function MassGroup() {
         path="movingMass"
         label="Stated as"
         choices={[
-          { value: 'total', label: 'all that moves' },
-          { value: 'added', label: 'besides the magnets' },
+          { value: 'total', label: 'total' },
+          { value: 'added', label: 'added' },
         ]}
         read={() => chosen}
         onChoose={choose}
       />
-      <QuantityAt path={`movingMass.${chosen}`} label="Mass" hint={chosen === 'added' ? hints.mass : undefined} />
+      <QuantityAt
+        path={`movingMass.${chosen}`}
+        label={chosen === 'total' ? 'All that moves' : 'Besides magnets'}
+        hint={chosen === 'added' ? hints.mass : undefined}
+      />
     </FieldGroup>
   );
 }
@@ -47,7 +51,7 @@ const kindOf = (value: unknown): SuspensionKind =>
   typeof value === 'string' && Object.hasOwn(suspensions, value) ? (value as SuspensionKind) : 'spring';
 
 const suspensionWords: Record<SuspensionKind, string> = {
-  spring: 'spring, linear and cubic',
+  spring: 'spring',
   helical: 'helical spring',
   levitated: 'levitated',
   table: 'force table',

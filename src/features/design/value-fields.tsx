@@ -3,7 +3,7 @@ import { useState } from 'react';
 import type { ReactNode } from 'react';
 import { designField } from '#contracts/design-document';
 import type { DocumentField } from '#contracts/design-document';
-import { formatInUnit, readQuantity, textInUnit } from '../../lib/quantities';
+import { readQuantity, textInUnit } from '../../lib/quantities';
 import { IconButton } from '../../ui/button';
 import { Checkbox } from '../../ui/checkbox';
 import { ComboBox } from '../../ui/combo-box';
@@ -126,7 +126,7 @@ export function QuantityAt({ path, kind, label, hint }: QuantityAtProps) {
         most={maximum}
         hint={hint}
         error={issue === undefined ? undefined : `${name}: ${issue}.`}
-        source={field.default === undefined ? undefined : `default ${formatInUnit(field.default, dimension, unit)}`}
+        placeholder={field.default === undefined ? undefined : textInUnit(field.default, dimension, unit)}
       />
     </div>
   );

@@ -9,16 +9,18 @@ interface FreshnessProps {
   shown: boolean;
   /** Names of the fields that are wrong. */
   wrong: readonly { path: string; label: string }[];
+  /** What stands there while nothing needs saying: how the figures were reached. */
+  calm: string;
   failure?: string | undefined;
   onRetry: () => void;
 }
 
 const names = (wrong: FreshnessProps['wrong']) => wrong.slice(0, 3);
 
-/** Says to what state of the fields the figures belong; nothing where that is the present one. */
-export function FreshnessWords({ freshness, shown, wrong, failure, onRetry }: FreshnessProps) {
-  if (freshness === 'current') return null;
-  if (freshness === 'none' || freshness === 'computing') return <Computing shown={shown} />;
+/** Says to what state of the fields the figures belong; where that is the present one, how they were reached. */
+export function FreshnessWords({ freshness, shown, wrong, calm, failure, onRetry }: FreshnessProps) {
+  if (freshness === 'current') return <p className="text-sm text-graphite">{calm}</p>;
+  if (freshness === 'none' || freshness === 'computing') return <Computing {...{ shown, calm }} />;
   if (freshness === 'failed')
     return (
       <div className="flex flex-col items-start gap-1.5">
@@ -54,10 +56,10 @@ export function FreshnessWords({ freshness, shown, wrong, failure, onRetry }: Fr
 }
 
 /** Quick answers pass without a word; only what takes a moment is said. */
-function Computing({ shown }: { shown: boolean }) {
+function Computing({ shown, calm }: { shown: boolean; calm: string }) {
   const slow = useSlow(150);
-  if (!slow) return <span className="text-sm">&nbsp;</span>;
-  return <span className="text-sm text-amber">{shown ? 'previous figures – computing' : 'computing'}</span>;
+  if (!slow) return <p className="text-sm text-graphite">{calm}</p>;
+  return <p className="text-sm text-amber">{shown ? 'previous figures – computing' : 'computing'}</p>;
 }
 
 /** The same in a word or two; null where the figures are the present ones. */

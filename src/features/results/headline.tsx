@@ -32,7 +32,6 @@ export function Headline({ estimate, document, previous, state }: HeadlineProps)
           <LeadFigure number={number} unit={unit} after={loadWords(document)} />
         )}
       </div>
-      {estimate ? <p className="text-sm text-graphite">{estimate.response.method}</p> : null}
       <div aria-live="polite" className="min-h-5">
         {state}
       </div>
@@ -93,7 +92,10 @@ export function KeyResults({ estimate, previous }: { estimate: Estimate; previou
           ),
         },
         { label: 'Resonance', value: <Quantity value={mechanics.naturalFrequency} dimension="frequency" /> },
-        { label: 'Travel', value: <Quantity value={response.displacementPeak} dimension="length" after="peak" /> },
+        {
+          label: 'Travel',
+          value: <Quantity value={response.displacementPeak} dimension="length" unit="mm" after="peak" />,
+        },
         {
           label: 'Of the bound',
           value:

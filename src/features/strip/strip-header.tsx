@@ -35,7 +35,7 @@ function Scope({ motion, play }: { motion: Motion; play: Play }) {
 }
 
 const ReadOut = ({ name, children }: { name: string; children: ReactNode }) => (
-  <div className="flex items-baseline gap-1.5 whitespace-nowrap">
+  <div className="flex items-baseline justify-between gap-1.5 whitespace-nowrap">
     <dt className="text-graphite">{name}</dt>
     <dd className="min-w-[4.5em] text-right font-semibold">{children}</dd>
   </div>
@@ -63,47 +63,49 @@ export function StripHeader({ play, motion, position, at, travel, moved, onReset
   const icon = steps ? StepForward : play.playing ? Pause : PlayIcon;
   const label = steps ? 'Step through the motion' : play.playing ? 'Pause the motion' : 'Play the motion';
   return (
-    <div className="flex flex-wrap items-center gap-x-4 gap-y-2">
-      <div className="flex items-center gap-2.5">
-        <IconButton
-          icon={icon}
-          label={motion ? label : 'No motion was computed'}
-          variant="secondary"
-          disabled={motion === null}
-          onPress={play.toggle}
-          className="rounded-full! border-copper! text-copper! disabled:border-(--edge)! disabled:text-graphite!"
-        />
-        {motion ? (
-          <>
-            <Scope {...{ motion, play }} />
-            <span className="text-sm leading-tight text-graphite">
-              {steps ? 'in steps, as less motion was asked for' : slowdownWords(play.slowdown)}
-              <span className="block font-mono">
-                EMF {play.time === null ? '–' : <Quantity value={play.emf} dimension="voltage" unit="V" signed />}
+    <div className="@container">
+      <div className="flex flex-wrap items-center gap-x-4 gap-y-2">
+        <div className="flex items-center gap-2.5">
+          <IconButton
+            icon={icon}
+            label={motion ? label : 'No motion was computed'}
+            variant="secondary"
+            disabled={motion === null}
+            onPress={play.toggle}
+            className="rounded-full! border-copper! text-copper! disabled:border-(--edge)! disabled:text-graphite!"
+          />
+          {motion ? (
+            <>
+              <Scope {...{ motion, play }} />
+              <span className="text-sm leading-tight text-graphite">
+                {steps ? 'in steps, as less motion was asked for' : slowdownWords(play.slowdown)}
+                <span className="block font-mono">
+                  EMF {play.time === null ? '–' : <Quantity value={play.emf} dimension="voltage" unit="V" signed />}
+                </span>
               </span>
-            </span>
-          </>
-        ) : (
-          <span className="text-sm text-graphite">no motion computed</span>
-        )}
-        {moved ? (
-          <IconButton icon={Undo2} size="small" label="Put the assembly back at rest" onPress={onReset} />
-        ) : null}
+            </>
+          ) : (
+            <span className="text-sm text-graphite">no motion computed</span>
+          )}
+          {moved ? (
+            <IconButton icon={Undo2} size="small" label="Put the assembly back at rest" onPress={onReset} />
+          ) : null}
+        </div>
+        <dl className="ml-auto grid grid-cols-2 gap-x-5 leading-snug @[52rem]:flex @[52rem]:gap-x-4">
+          <ReadOut name="position">
+            <Text parts={[formatPlace(position), 'mm']} />
+          </ReadOut>
+          <ReadOut name="flux">
+            <Text parts={at?.fluxLinkage} />
+          </ReadOut>
+          <ReadOut name="coupling">
+            <Text parts={at?.coupling} />
+          </ReadOut>
+          <ReadOut name="travel">
+            <Text parts={travel === null ? undefined : [`±${formatNumber(travel * 1000)}`, 'mm']} />
+          </ReadOut>
+        </dl>
       </div>
-      <dl className="ml-auto flex flex-wrap gap-x-4 gap-y-0.5 tabular-nums">
-        <ReadOut name="position">
-          <Text parts={[formatPlace(position), 'mm']} />
-        </ReadOut>
-        <ReadOut name="flux">
-          <Text parts={at?.fluxLinkage} />
-        </ReadOut>
-        <ReadOut name="coupling">
-          <Text parts={at?.coupling} />
-        </ReadOut>
-        <ReadOut name="travel">
-          <Text parts={travel === null ? undefined : [`±${formatNumber(travel * 1000)}`, 'mm']} />
-        </ReadOut>
-      </dl>
     </div>
   );
 }

@@ -58,7 +58,7 @@ export function stripLayout({ width, domain, drawing, lanes, tallest = 340 }: La
   const planTop = sectionBottom + below + (plan ? 18 : 0);
   const planBottom = planTop + planHeight * scale;
   const planY = plan ? (mm: number) => planTop + (plan.y1 - mm) * scale : null;
-  const laneHeight = Math.round(Math.max(76, Math.min(132, plotWidth * 0.15)));
+  const laneHeight = Math.round(Math.max(72, Math.min(124, plotWidth * 0.138)));
   const gap = compact ? 20 : 22;
   const lanesTop = (plan ? planBottom + 10 : sectionBottom + below) + 14;
   const laneRects = Array.from({ length: lanes }, (_, index) => {
