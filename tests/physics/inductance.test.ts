@@ -2,6 +2,8 @@ import { describe, expect, it } from 'vitest';
 import { mutualOfWindings } from '../../server/physics/models/coaxial-inductance';
 import type { AxialWinding } from '../../server/physics/models/coaxial-inductance';
 import { MAGNETIC_CONSTANT } from '../../server/physics/models/constants';
+import type { CoilShape } from '../../server/physics/models/coil';
+import { mutualOfFlatCoils } from '../../server/physics/models/flat-inductance';
 import { inductanceOfCoils } from '../../server/physics/models/inductance';
 import type { CoilDesign } from '../../server/physics/models/inductance';
 import { expectedOf, handbookValue, handbookValues, numberOf, numbersOf, referenceCase } from '../support/handbook';
@@ -109,5 +111,112 @@ describe('inductance of thick round coils', () => {
 
   it('refuses a window without area', () => {
     expect(() => selfOf(winding(9e-3, 9e-3, 1e-3))).toThrow(/outer radius above inner radius/);
+  });
+});
+
+describe('inductance of flat coils', () => {
+  const racetrack = (straight: number, inner: number, outer: number, length: number, at = [0, 0, 0]): CoilShape => ({
+    shape: 'racetrack',
+    straight,
+    innerEndRadius: inner,
+    outerEndRadius: outer,
+    length,
+    at,
+    turns: 100,
+    sense: 1,
+  });
+  const selfOfFlat = (coil: CoilShape): number => mutualOfFlatCoils(coil, coil);
+
+  it.each([
+    ['F5-07', 1e-7],
+    ['F5-08', 1e-7],
+  ])('all coils of case %s in series', (id, tolerance) => {
+    const reference = referenceCase(id);
+    const L = inductanceOfCoils(reference.design as unknown as CoilDesign);
+    expect(relative(L, expectedOf(reference, 'coil.inductance') as number)).toBeLessThan(tolerance);
+  });
+
+  it.each(handbookValues('inductance', 'rectangle-'))(
+    'one rectangular turn: handbook/inductance.json#$id ($grade)',
+    ({ given, expected }) => {
+      // a square section with the mean distance of the round wire: 0.44705 c = 0.77880 r
+      const half = ((0.7788 / 0.44705) * numberOf(given, 'wireRadius_m')) / 2;
+      const sides = [numberOf(given, 'sideA_m'), numberOf(given, 'sideB_m')];
+      const turn: CoilShape = {
+        shape: 'rectangular',
+        inner: sides.map((side) => side - 2 * half),
+        outer: sides.map((side) => side + 2 * half),
+        length: 2 * half,
+        at: [0, 0, 0],
+        turns: 1,
+        sense: 1,
+      };
+      // the formula itself drops terms of the order of r/side
+      expect(relative(selfOfFlat(turn), numberOf(expected, 'inductance_H'))).toBeLessThan(2e-3);
+    },
+  );
+
+  it('a racetrack goes over into the round coil', () => {
+    const round = selfOf(winding(3e-3, 8e-3, 2.5e-3, 0, 100));
+    const at = (straight: number): number => selfOfFlat(racetrack(straight, 3e-3, 8e-3, 2.5e-3));
+    expect(relative(2 * at(1e-6) - at(2e-6), round)).toBeLessThan(1e-7);
+  });
+
+  it('a coil cut in two across its thickness is still the same coil', () => {
+    const lower = racetrack(10e-3, 2e-3, 6e-3, 1e-3, [0, 0, -1.5e-3]);
+    const upper = racetrack(10e-3, 2e-3, 6e-3, 3e-3, [0, 0, 0.5e-3]);
+    const whole = racetrack(10e-3, 2e-3, 6e-3, 4e-3);
+    const parts = [lower, upper].map((coil, i) => ({ ...coil, turns: [25, 75][i]! }));
+    let sum = 0;
+    for (const one of parts) for (const two of parts) sum += mutualOfFlatCoils(one, two);
+    expect(relative(sum, selfOfFlat(whole))).toBeLessThan(1e-7);
+    const frame: CoilShape = { ...whole, shape: 'rectangular', inner: [4e-3, 10e-3], outer: [12e-3, 22e-3] };
+    const halves = [-1e-3, 1e-3].map((z): CoilShape => ({ ...frame, length: 2e-3, at: [0, 0, z], turns: 50 }));
+    sum = 0;
+    for (const one of halves) for (const two of halves) sum += mutualOfFlatCoils(one, two);
+    expect(relative(sum, selfOfFlat(frame))).toBeLessThan(1e-7);
+  });
+
+  it('the two routes to the mutual inductance agree where both hold', () => {
+    const lower = racetrack(10e-3, 2e-3, 6e-3, 2e-3);
+    const above = (x: number): CoilShape => racetrack(10e-3, 2e-3, 6e-3, 2e-3, [x, 0, 2.5e-3]);
+    // aligned: closed forms; a ten-millionth beside: Neumann's integral
+    expect(relative(mutualOfFlatCoils(lower, above(1e-7)), mutualOfFlatCoils(lower, above(0)))).toBeLessThan(1e-5);
+    const round: CoilShape = {
+      shape: 'round',
+      innerDiameter: 6e-3,
+      outerDiameter: 14e-3,
+      length: 2e-3,
+      at: [0, 0, 0],
+      turns: 100,
+      sense: 1,
+    };
+    const beside = { ...round, at: [1e-7, 0, 3e-3] };
+    expect(
+      relative(mutualOfFlatCoils(round, beside), mutualOfFlatCoils(round, { ...round, at: [0, 0, 3e-3] })),
+    ).toBeLessThan(1e-5);
+  });
+
+  it('far apart two coils are dipoles: −μ0 m m′/(4π d³) side by side', () => {
+    const coil = racetrack(4e-3, 1e-3, 3e-3, 1e-3);
+    const distance = 0.3;
+    // Σ over turns of the area, per ampere
+    const area = 100 * (Math.PI * (13 / 3) + 2 * 2 * 4) * 1e-6;
+    const dipoles = (-MAGNETIC_CONSTANT * area * area) / (4 * Math.PI * distance ** 3);
+    expect(relative(mutualOfFlatCoils(coil, { ...coil, at: [distance, 0, 0] }), dipoles)).toBeLessThan(4e-3);
+  });
+
+  it('refuses a coil on an axis', () => {
+    const coil = racetrack(4e-3, 1e-3, 3e-3, 1e-3);
+    const round: CoilShape = {
+      shape: 'round',
+      innerDiameter: 1e-3,
+      outerDiameter: 2e-3,
+      length: 1e-3,
+      at: 0,
+      turns: 1,
+      sense: 1,
+    };
+    expect(() => mutualOfFlatCoils(coil, round)).toThrow(/must stand at a point/);
   });
 });

@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import { gaussLegendre, integrate } from '../../server/physics/kernels/gauss-legendre';
-import { gradedRule } from '../../server/physics/kernels/graded-rule';
+import { gradedRule, nearLineRule } from '../../server/physics/kernels/graded-rule';
 
 describe('Gauss–Legendre rule', () => {
   it('is exact to degree 2n − 1 and not beyond', () => {
@@ -60,5 +60,19 @@ describe('graded rule', () => {
   it('takes few points where the singularity is far', () => {
     expect(gradedRule(5, 6, 0, 1e-12).nodes.length).toBeLessThan(8);
     expect(() => gradedRule(1, 1, 0, 1e-9)).toThrow(/to must be above from/);
+  });
+});
+
+describe('rule near a line', () => {
+  it.each([10, 0.3, 1e-3, 1e-8])('integrates 1/√(x² + δ²) and ln(x² + δ²) for δ = %d', (delta) => {
+    const { nodes, weights } = nearLineRule(2, delta, 1e-12);
+    const sum = (f: (x: number) => number): number => nodes.reduce((total, x, i) => total + weights[i]! * f(x), 0);
+    expect(sum((x) => 1 / Math.hypot(x, delta)) / Math.asinh(2 / delta)).toBeCloseTo(1, 11);
+    const primitive = 2 * Math.log(4 + delta * delta) - 4 + 2 * delta * Math.atan(2 / delta);
+    expect(sum((x) => Math.log(x * x + delta * delta)) / primitive).toBeCloseTo(1, 10);
+  });
+
+  it('refuses empty ranges', () => {
+    expect(() => nearLineRule(1, 0, 1e-9)).toThrow(/must be positive/);
   });
 });

@@ -64,3 +64,33 @@ function appendSide(
     }
   }
 }
+
+/**
+ * Quadrature rule on [0, to] for functions that are analytic except near ± i·width: the nearly singular case of a place
+ * beside a line.
+ *
+ * @param to end of the range, positive
+ * @param width distance of the singular points from the real axis, positive
+ * @param tolerance relative error aimed at
+ * @returns nodes and weights that sum to `to`
+ * @throws RangeError where `to` or `width` is not positive
+ * Method: x = width sinh t puts the singular points on Im t = ±π/2, whatever the width.
+ */
+export function nearLineRule(to: number, width: number, tolerance: number): QuadratureRule {
+  if (!(to > 0) || !(width > 0)) throw new RangeError(`to and width must be positive, got ${to} and ${width}`);
+  const range = Math.asinh(to / width);
+  const panels = Math.max(1, Math.ceil(range / PANEL_LENGTH));
+  const length = range / panels;
+  const rule = gaussLegendre(Math.min(64, pointsFor(length, tolerance)));
+  const points = rule.nodes.length;
+  const nodes = new Float64Array(panels * points);
+  const weights = new Float64Array(panels * points);
+  for (let k = 0; k < panels; k++) {
+    for (let i = 0; i < points; i++) {
+      const t = length * (k + 0.5 * (1 + rule.nodes[i]!));
+      nodes[k * points + i] = width * Math.sinh(t);
+      weights[k * points + i] = 0.5 * length * rule.weights[i]! * width * Math.cosh(t);
+    }
+  }
+  return { nodes, weights };
+}

@@ -1,5 +1,5 @@
 import { gaussLegendre } from '../kernels/gauss-legendre';
-import { gradedRule } from '../kernels/graded-rule';
+import { axialEnds, overDifference } from './winding-pairs';
 import { addCoaxialCircles, CIRCLE_TERMS } from './coaxial-circles';
 
 /** A thick round winding on a common axis; current spread evenly over the window. SI. */
@@ -12,12 +12,8 @@ export interface AxialWinding {
   readonly turns: number;
 }
 
-/** Relative error of the rule over the difference of the radii. */
-const TOLERANCE = 1e-12;
 /** Points across the mean of the two radii, along which the integrand is smooth for any difference of the radii. */
 const ACROSS_POINTS = 10;
-/** Points of the first strip beside v = 0, where v = s t³ turns v² ln v into a function smooth enough for Gauss. */
-const FIRST_POINTS = 14;
 
 /**
  * Mutual inductance of two coaxial thick round windings; self-inductance where both are the same.
@@ -63,45 +59,8 @@ export function mutualOfWindings(p: AxialWinding, q: AxialWinding): number {
   for (let k = 1; k < breaks.length; k++) {
     const left = Math.max(from, breaks[k - 1]!);
     const right = Math.min(to, breaks[k]!);
-    if (right - left > 1e-12 * (to - from)) overStrips(left, right, nearest, addStrip);
+    if (right - left > 1e-12 * (to - from)) overDifference(left, right, nearest, addStrip);
   }
   const area = (w: AxialWinding): number => w.length * (w.outerRadius - w.innerRadius);
   return ((alike ? 2 : 1) * p.turns * q.turns * total[0]!) / (area(p) * area(q));
-}
-
-/** The four ends of the second difference of the even function G, equal distances merged. */
-function axialEnds(p: AxialWinding, q: AxialWinding): { distance: number; sign: number }[] {
-  const offset = p.at - q.at;
-  const ends: { distance: number; sign: number }[] = [];
-  for (const i of [1, -1]) {
-    for (const j of [1, -1]) {
-      const exact = Math.abs(offset + 0.5 * (i * p.length + j * q.length));
-      const distance = exact < 1e-13 * (p.length + q.length) ? 0 : exact;
-      const same = ends.find((end) => Math.abs(end.distance - distance) < 1e-13 * (p.length + q.length));
-      if (same) same.sign += i * j;
-      else ends.push({ distance, sign: i * j });
-    }
-  }
-  return ends.filter(({ sign }) => sign !== 0);
-}
-
-/** Rule over v in [left, right], which does not hold v = 0 inside but may touch it. */
-function overStrips(left: number, right: number, nearest: number, addStrip: (v: number, weight: number) => void): void {
-  if (left > 0 || right < 0) {
-    const { nodes, weights } = gradedRule(left, right, 0, TOLERANCE);
-    for (let i = 0; i < nodes.length; i++) addStrip(nodes[i]!, weights[i]!);
-    return;
-  }
-  const direction = right > 0 ? 1 : -1;
-  const reach = Math.max(right, -left);
-  const first = Math.min(reach, nearest);
-  const { nodes, weights } = gaussLegendre(FIRST_POINTS);
-  for (let i = 0; i < FIRST_POINTS; i++) {
-    const t = 0.5 * (1 + nodes[i]!);
-    addStrip(direction * first * t * t * t, 1.5 * weights[i]! * first * t * t);
-  }
-  if (reach > first) {
-    const rest = gradedRule(first, reach, 0, TOLERANCE);
-    for (let i = 0; i < rest.nodes.length; i++) addStrip(direction * rest.nodes[i]!, rest.weights[i]!);
-  }
 }

@@ -1,6 +1,7 @@
 import type { CoilShape } from './coil';
 import { mutualOfWindings } from './coaxial-inductance';
 import type { AxialWinding } from './coaxial-inductance';
+import { mutualOfFlatCoils } from './flat-inductance';
 
 /** The part of a design document that decides on the coils' inductance. */
 export interface CoilDesign {
@@ -16,21 +17,23 @@ export interface CoilDesign {
  * @throws RangeError where the layout does not take a coil's shape
  */
 export function inductanceOfCoils(design: CoilDesign): number {
-  const windings = design.coils.map(axialWinding);
+  const { coils } = design;
+  const mutual = design.layout === 'across' ? mutualOfFlatCoils : mutualOnAxis;
   let total = 0;
-  for (let i = 0; i < windings.length; i++) {
-    total += mutualOfWindings(windings[i]!, windings[i]!);
-    for (let j = 0; j < i; j++) {
-      const sense = design.coils[i]!.sense * design.coils[j]!.sense;
-      total += 2 * sense * mutualOfWindings(windings[i]!, windings[j]!);
-    }
+  for (let i = 0; i < coils.length; i++) {
+    total += mutual(coils[i]!, coils[i]!);
+    for (let j = 0; j < i; j++) total += 2 * coils[i]!.sense * coils[j]!.sense * mutual(coils[i]!, coils[j]!);
   }
   return total;
 }
 
-function axialWinding(coil: CoilShape, i: number): AxialWinding {
+function mutualOnAxis(p: CoilShape, q: CoilShape): number {
+  return mutualOfWindings(axialWinding(p), axialWinding(q));
+}
+
+function axialWinding(coil: CoilShape): AxialWinding {
   if (coil.shape !== 'round' || typeof coil.at !== 'number') {
-    throw new RangeError(`coils.${i} must be round and stand on the axis in the through layout`);
+    throw new RangeError('coils must be round and stand on the axis in the through layout');
   }
   return {
     innerRadius: coil.innerDiameter / 2,
