@@ -1,3 +1,4 @@
+import type { Role } from '#workflows/revision';
 import type { Deps } from '../app';
 import { openStage } from './demo/stage';
 import { story, storyDays } from './demo/story';
@@ -7,7 +8,7 @@ import type { PersonKey } from './demo/team';
 export interface DemoSignIn {
   email: string;
   password: string;
-  roles: string[];
+  roles: Role[];
 }
 
 /**

@@ -1,5 +1,6 @@
 import { randomBytes } from 'node:crypto';
 import { PersonCreate } from '#contracts/people';
+import { roleWords } from '#workflows/revision';
 import type { Deps } from '../app';
 import { ConfigError, loadConfig } from '../config';
 import { migrateToLatest, openDatabase } from '../db';
@@ -61,9 +62,11 @@ export async function setUp(environment: NodeJS.ProcessEnv, { demo }: { demo: bo
     }
     console.log('\nThe database is empty: putting in the demonstration data …');
     const { signIns } = await seedDemo(deps);
+    // The messages of the story are there to be read; invented addresses are not written to.
+    await deps.db('mail_messages').where({ state: 'waiting' }).update({ state: 'kept' });
     console.log('\nSign in as one of an invented team:');
     for (const { email, password, roles } of signIns) {
-      console.log(`  ${email.padEnd(34)} ${password.padEnd(22)} ${roles.join(', ')}`);
+      console.log(`  ${email.padEnd(34)} ${password.padEnd(22)} ${roles.map((role) => roleWords[role]).join(', ')}`);
     }
     console.log('');
   } finally {

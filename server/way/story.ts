@@ -46,8 +46,10 @@ const because = (words: string): string => (words === '' ? '' : `: ${words.repla
 
 /** What was done, to be put after the name of who did it. */
 const phrases: Record<Deed, (detail: Record<string, unknown>, it: string) => string> = {
-  created: (detail) =>
-    text(detail, 'from') === '' ? 'created this revision' : `drafted this revision from ${text(detail, 'from')}`,
+  created: (detail, it) => {
+    const what = it === 'it' ? 'this revision' : it;
+    return text(detail, 'from') === '' ? `created ${what}` : `drafted ${what} from ${text(detail, 'from')}`;
+  },
   savedDraft: () => 'saved the draft',
   submitted: (detail, it) => `submitted ${it} for review${because(text(detail, 'note'))}`,
   remarked: (detail, it) =>
@@ -118,9 +120,14 @@ function withoutRepeatedSaves(entries: Entry[]): Entry[] {
   });
 }
 
+/** Deeds that speak of drafts, which those who see releases only know nothing of. */
+const ofDrafts: readonly Deed[] = ['savedDraft', 'startedNextRevision', 'laterAbandoned'];
+
 /** What happened to a revision, in sentences, oldest first. */
-export async function activityOf(db: Knex, revisionId: string): Promise<Activity[]> {
-  const entries = withoutRepeatedSaves(await entriesOf(db, revisionId));
+export async function activityOf(db: Knex, revisionId: string, { drafts }: { drafts: boolean }): Promise<Activity[]> {
+  const entries = withoutRepeatedSaves(await entriesOf(db, revisionId)).filter(
+    ({ deed }) => drafts || !ofDrafts.includes(deed),
+  );
   return entries.map(({ at, by, phrase }) => ({ at, by, sentence: `${by?.name ?? 'The server'} ${phrase}.` }));
 }
 
@@ -164,7 +171,7 @@ export async function latestDeeds(db: Knex, states: readonly RevisionState[] | '
       'designs.number',
       'designs.title',
     );
-  if (states !== 'all') rows.whereIn('revisions.state', [...states]);
+  if (states !== 'all') rows.whereIn('revisions.state', [...states]).whereNotIn('action', [...ofDrafts]);
   return (await rows).flatMap(({ at, action, detail, actor_id, name, letter, design_id, number, title }) => {
     if (!isDeed(action)) return [];
     const phrase = phraseOf(action, AuditDetail.parse(JSON.parse(detail)), `${number} ${letter}`);

@@ -45,6 +45,8 @@ export interface Stage {
   send<Type extends SendEvent['type']>(who: PersonKey, key: string, type: Type, words: WordsOf<Type>): Promise<void>;
   /** Closes the first remark that is open. */
   answer(who: PersonKey, key: string, answer: string): Promise<void>;
+  /** Opens a run with the next specimen of the revision. */
+  startRun(who: PersonKey, key: string): Promise<void>;
   conditions(who: PersonKey, key: string, temperature: number, humidity: number, fixture: string): Promise<void>;
   read(who: PersonKey, key: string, words: ReadingWords): Promise<void>;
   /** Strikes the last reading of the open run. */
@@ -112,6 +114,11 @@ export async function openStage(deps: Deps, days: number): Promise<Stage> {
       const { id, version, remarks } = await revisionOf(key, actors[who]);
       const remarkId = remarks.find(({ closed }) => closed === null)?.id ?? '';
       await sendEvent(staged, id, { type: 'closeRemark', version, remarkId, answer }, actors[who], confirmPassword);
+    },
+    async startRun(who, key) {
+      const { id, version, design, letter, runs } = await revisionOf(key, actors[who]);
+      const specimen = `${design.number}-${letter}-${String(runs.length + 1).padStart(2, '0')}`;
+      await sendEvent(staged, id, { type: 'startRun', version, specimen }, actors[who], confirmPassword);
     },
     async conditions(who, key, temperature, humidity, fixture) {
       const { id } = await openRunOf(key, actors[who]);

@@ -45,7 +45,7 @@ const feedPump: Scene[] = [
   scene(4, '08:50', (stage) =>
     stage.send('sunniva', 'feed', 'approve', { note: 'Spring rate and load checked by hand.' }),
   ),
-  scene(5, '09:00', (stage) => stage.send('bram', 'feed', 'startRun', { specimen: 'FN-001-A-01' })),
+  scene(5, '09:00', (stage) => stage.startRun('bram', 'feed')),
   scene(5, '09:20', (stage) => stage.conditions('bram', 'feed', 22.4, 41, 'Shaker table, cube adapter, 0.5 N·m')),
   scene(5, '10:10', (stage) =>
     stage.read('bram', 'feed', { line: 'Coil resistance', value: 104.6, unit: 'Ω', with: 'meter' }),
@@ -86,8 +86,8 @@ const feedPump: Scene[] = [
 ];
 
 /** Opens a run and says under which conditions. */
-const startRun = (key: string, specimen: string, day: number, who: 'bram' | 'edda' = 'bram'): Scene[] => [
-  scene(day, '08:30', (stage) => stage.send(who, key, 'startRun', { specimen })),
+const startRun = (key: string, day: number, who: 'bram' | 'edda' = 'bram'): Scene[] => [
+  scene(day, '08:30', (stage) => stage.startRun(who, key)),
   scene(day, '08:45', (stage) => stage.conditions(who, key, 21.8, 44, 'Shaker table, cube adapter, 0.5 N·m')),
 ];
 
@@ -104,7 +104,7 @@ const draw = (
 ];
 
 const feedPumpB: Scene[] = [
-  ...startRun('feed', 'FN-001-B-01', 13),
+  ...startRun('feed', 13),
   scene(13, '09:30', (stage) =>
     stage.read('bram', 'feed', { line: 'Coil resistance', value: 155.1, unit: 'Ω', with: 'meter' }),
   ),
@@ -174,7 +174,7 @@ const ringMagnet: Scene[] = [
     stage.send('idris', 'ring', 'submit', { note: 'Ring for a through-bolt instead of glue.' }),
   ),
   scene(9, '09:30', (stage) => stage.send('sunniva', 'ring', 'approve', { note: 'Bolt is non-magnetic, as noted.' })),
-  ...startRun('ring', 'FN-002-A-02', 15),
+  ...startRun('ring', 15),
   scene(15, '09:40', (stage) =>
     stage.read('bram', 'ring', {
       line: 'Natural frequency, not below',
@@ -217,7 +217,7 @@ const fanPedestal: Scene[] = [
 const fanMotor: Scene[] = [
   ...draw('maren', 'motor', 'fan', 'Fan bearing node, motor side', 34),
   scene(36, '09:00', (stage) => stage.send('idris', 'motor', 'approve', { note: '' })),
-  ...startRun('motor', 'FN-005-A-01', 40),
+  ...startRun('motor', 40),
   scene(40, '09:35', (stage) =>
     stage.read('bram', 'motor', {
       line: 'Power into the load',
@@ -246,7 +246,7 @@ const fanMotor: Scene[] = [
 const fanDuct: Scene[] = [
   ...draw('maren', 'duct', 'fan', 'Fan duct node', 20),
   scene(21, '11:00', (stage) => stage.send('edda', 'duct', 'approve', { note: '' })),
-  ...startRun('duct', 'FN-003-A-01', 24, 'edda'),
+  ...startRun('duct', 24, 'edda'),
   scene(24, '10:00', (stage) =>
     stage.read('edda', 'duct', { line: 'Power into the load', value: 1.724e-3, unit: 'mW', with: 'analyser' }),
   ),
@@ -273,7 +273,7 @@ const conveyorPlate: Scene[] = [
   scene(25, '10:00', (stage) =>
     stage.send('sunniva', 'plate', 'approve', { note: 'Cross-checked against the survey of both tones.' }),
   ),
-  ...startRun('plate', 'FN-004-A-01', 36),
+  ...startRun('plate', 36),
   scene(36, '09:50', (stage) =>
     stage.read('bram', 'plate', { line: 'Power into the load', value: 2.71e-3, unit: 'mW', with: 'analyser' }),
   ),
@@ -293,7 +293,7 @@ const conveyorPlate: Scene[] = [
 const feedPumpBack: Scene[] = [
   ...draw('jonna', 'back', 'feedPump', 'Feed pump node, non-drive end', 33),
   scene(35, '13:30', (stage) => stage.send('edda', 'back', 'approve', { note: 'Same coil as FN-001 A.' })),
-  ...startRun('back', 'FN-006-A-01', 38),
+  ...startRun('back', 38),
   scene(38, '09:20', (stage) =>
     stage.read('bram', 'back', { line: 'Coil resistance', value: 103.9, unit: 'Ω', with: 'meter' }),
   ),

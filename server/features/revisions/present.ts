@@ -4,6 +4,7 @@ import { offersFor, stateWords } from '#workflows/revision';
 import type { Actor } from '#workflows/revision';
 import type { Deps } from '../../app';
 import { activityOf } from '../../way/story';
+import { maySee } from '../../way/revisions';
 import type { StoredRevision } from '../../way/revisions';
 import { recordOfRevision } from '../records/reads';
 import { summaryOf } from '../runs/reads';
@@ -29,6 +30,7 @@ export async function presentRevision(deps: Deps, revision: StoredRevision, acto
   const check = draft ? await checkDraft(deps, revision.draft, brief.document) : null;
   const facts = check === null ? revision.facts : { ...revision.facts, submitObstacles: check.obstacles };
   const record = await recordOfRevision(db, revision.id);
+  const seesDrafts = maySee(actor, 'draft');
   const refusal = whyNotEdit(revision, actor);
   return {
     id: revision.id,
@@ -50,10 +52,10 @@ export async function presentRevision(deps: Deps, revision: StoredRevision, acto
     signatures,
     approvalsNeeded: revision.facts.approvalsNeeded,
     runs: runs.map(summaryOf),
-    continuedAs: revision.facts.continuedAs,
+    continuedAs: seesDrafts ? revision.facts.continuedAs : null,
     continuedFrom: await letterOf(db, revision.continuedFromId),
     recordId: record?.id ?? null,
-    activity: await activityOf(db, revision.id),
+    activity: await activityOf(db, revision.id, { drafts: seesDrafts }),
     mayEdit: refusal === null,
     whyNotEdit: refusal,
     ...offersFor(revision.state, facts, actor),
