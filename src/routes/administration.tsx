@@ -1,10 +1,17 @@
 import { Outlet, redirect, useLocation } from 'react-router-dom';
 import type { LoaderFunctionArgs } from 'react-router-dom';
 import { AdministrationFrame } from '../features/administration/administration-frame';
+import { sessionQuery } from '../features/session/queries';
+import { queryClient } from '../lib/query-client';
+import { RequestError } from '../lib/request-error';
 import { PageHeader } from '../ui/page-header';
 
-export const loader = ({ request }: LoaderFunctionArgs) =>
-  /^\/administration\/?$/.test(new URL(request.url).pathname) ? redirect('/administration/people') : null;
+export const loader = async ({ request }: LoaderFunctionArgs) => {
+  const { me } = await queryClient.query({ ...sessionQuery, staleTime: 'static' });
+  if (!me?.mayEnter.includes('administration'))
+    throw new RequestError(403, 'forbidden', 'Administration is open to administrators.');
+  return /^\/administration\/?$/.test(new URL(request.url).pathname) ? redirect('/administration/people') : null;
+};
 
 const titles: Record<string, string> = {
   '/administration/people': 'People',

@@ -38,6 +38,7 @@ export function MessageDialog({ messageId, onClose }: MessageDialogProps) {
             <ActionButton
               icon={RotateCw}
               pending={resend.isPending}
+              reason="tooltip"
               whyNot={message.state === 'failed' ? null : 'Only a message that failed can be sent again.'}
               onPress={() =>
                 resend.mutate(undefined, {
