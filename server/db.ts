@@ -31,7 +31,7 @@ export const knexSettings = (file: string): Knex.Config => ({
 
 /** Opens (and makes, where absent) the database file; `:memory:` for one that lives with the connection. */
 export function openDatabase(file: string): Knex {
-  if (file !== ':memory:') mkdirSync(dirname(file), { recursive: true });
+  if (file !== ':memory:') mkdirSync(dirname(file), { recursive: true, mode: 0o700 });
   return knex(knexSettings(file));
 }
 

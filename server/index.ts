@@ -13,6 +13,7 @@ const hour = 60 * 60 * 1000;
 /** Requests under way get this long to end when the server is told to stop. */
 const grace = 10_000;
 
+/** Resolves once requests are answered. */
 async function serve(): Promise<void> {
   const config = loadConfig(process.env);
   const deps = openDeps(config);
@@ -75,7 +76,7 @@ async function serve(): Promise<void> {
   }
 }
 
-serve().catch((error: unknown) => {
+await serve().catch((error: unknown) => {
   const inUse = error instanceof Error && 'code' in error && error.code === 'EADDRINUSE';
   if (error instanceof ConfigError) console.error(error.message);
   else if (inUse) console.error('The port is in use already. PORT chooses another.');

@@ -20,6 +20,9 @@ export const contentPolicy = ({ tls }: Pick<Config, 'tls'>): HelmetOptions => ({
     },
   },
   strictTransportSecurity: tls ? { maxAge: 31_536_000 } : false,
+  // Without TLS browsers ignore it, and complain on the console where the host is not this machine.
+  crossOriginOpenerPolicy: tls ? { policy: 'same-origin' } : false,
+  originAgentCluster: tls,
   xFrameOptions: { action: 'deny' },
   referrerPolicy: { policy: 'same-origin' },
 });

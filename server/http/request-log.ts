@@ -16,7 +16,7 @@ export const requestLog = (logger: Logger): RequestHandler =>
       return id;
     },
     customLogLevel: (_request, response, error) =>
-      error !== undefined || response.statusCode >= 500 ? 'error' : response.statusCode >= 400 ? 'warn' : 'debug',
+      error !== undefined || response.statusCode >= 500 ? 'error' : response.statusCode >= 400 ? 'info' : 'debug',
     serializers: {
       req: ({ id, method, url, remoteAddress }: Record<string, unknown>) => ({ id, method, url, remoteAddress }),
       res: ({ statusCode }: Record<string, unknown>) => ({ statusCode }),

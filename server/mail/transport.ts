@@ -18,13 +18,13 @@ export const isPermanent = (error: unknown): boolean =>
   error.responseCode >= 500 &&
   error.responseCode < 600;
 
-/** Sends by SMTP. No attempt outlasts the lease of a message: see the worker. */
+/** Sends by SMTP; patient, because some mail servers make strangers wait. */
 export function smtpTransport(smtpUrl: string, config: Pick<Config, 'mail' | 'baseUrl'>): MailTransport {
   const transport = createTransport({
     url: smtpUrl,
-    connectionTimeout: 10_000,
-    greetingTimeout: 10_000,
-    socketTimeout: 20_000,
+    connectionTimeout: 20_000,
+    greetingTimeout: 40_000,
+    socketTimeout: 120_000,
     disableFileAccess: true,
     disableUrlAccess: true,
   });

@@ -6,7 +6,7 @@ import { isPermanent } from './transport';
 import type { MailTransport } from './transport';
 
 export interface MailWorker {
-  /** Ends after the message under way. */
+  /** Ends after the message under way, or a little later where that takes long. */
   stop(): Promise<void>;
 }
 
@@ -20,12 +20,14 @@ interface Needed {
 
 interface Timing {
   pollMs: number;
-  /** Longer than any attempt takes. After a crash a message taken stays taken until then. */
+  /** Renewed while an attempt lasts. After a crash a message that was taken stays taken so long. */
   leaseMs: number;
 }
 
 export const mostAttempts = 8;
 const seconds = 1000;
+/** How long stopping waits for the message under way. */
+const patience = 5 * seconds;
 const longestPause = 6 * 60 * 60 * seconds;
 
 /** Half a minute, then four times as long each time, six hours at most: 15 hours in all. */
@@ -52,14 +54,38 @@ async function claim({ db, now }: Needed, leaseMs: number): Promise<MessageRow |
   return row;
 }
 
+/** Keeps a claimed message for this worker as long as its attempt takes; after a crash nobody does, and the lease runs out. */
+function keepLease({ db, log, now }: Needed, { id, lease_until }: MessageRow, leaseMs: number) {
+  let until = lease_until;
+  let renewal = Promise.resolve();
+  const held = () => db<MessageRow>('mail_messages').where({ id, state: 'sending', lease_until: until });
+  const renew = async () => {
+    const next = later(now(), leaseMs);
+    try {
+      if ((await held().update({ lease_until: next })) === 1) until = next;
+    } catch (error) {
+      log.error({ err: error, message: id }, 'The lease of a message could not be renewed');
+    }
+  };
+  const timer = setInterval(() => {
+    renewal = renewal.then(renew);
+  }, leaseMs / 3);
+  return {
+    /** Writes down how the attempt went, and lets the message go. */
+    async settle(change: Partial<MessageRow>): Promise<void> {
+      clearInterval(timer);
+      await renewal;
+      await held().update({ lease_until: null, ...change });
+    },
+  };
+}
+
 /** Delivers one claimed message and writes down how it went. */
-async function handle({ db, log, now, transport }: Needed, row: MessageRow): Promise<void> {
-  const settle = (change: Partial<MessageRow>) =>
-    db<MessageRow>('mail_messages')
-      .where({ id: row.id, state: 'sending', lease_until: row.lease_until })
-      .update({ lease_until: null, ...change });
+async function handle(needed: Needed, row: MessageRow, leaseMs: number): Promise<void> {
+  const { log, now, transport } = needed;
+  const lease = keepLease(needed, row, leaseMs);
   if (transport === null) {
-    await settle({ state: 'kept' });
+    await lease.settle({ state: 'kept' });
     return;
   }
   try {
@@ -69,14 +95,14 @@ async function handle({ db, log, now, transport }: Needed, row: MessageRow): Pro
     const last_error = error instanceof Error ? error.message : String(error);
     const gaveUp = isPermanent(error) || row.attempts >= mostAttempts;
     log.warn({ message: row.id, attempts: row.attempts, gaveUp, err: error }, 'Mail was not taken');
-    await settle(
+    await lease.settle(
       gaveUp
         ? { state: 'failed', last_error }
         : { state: 'waiting', last_error, due_at: later(now(), pauseAfter(row.attempts)) },
     );
     return;
   }
-  await settle({ state: 'sent', sent_at: now().toISOString(), last_error: null });
+  await lease.settle({ state: 'sent', sent_at: now().toISOString(), last_error: null });
 }
 
 /**
@@ -85,7 +111,7 @@ async function handle({ db, log, now, transport }: Needed, row: MessageRow): Pro
  */
 export function startMailWorker(
   needed: Needed,
-  { pollMs, leaseMs }: Timing = { pollMs: 5 * seconds, leaseMs: 45 * seconds },
+  { pollMs, leaseMs }: Timing = { pollMs: 5 * seconds, leaseMs: 15 * seconds },
 ): MailWorker {
   let stopped = false;
   let again = false;
@@ -97,7 +123,7 @@ export function startMailWorker(
       do {
         again = false;
         for (let row = await claim(needed, leaseMs); row !== undefined; row = await claim(needed, leaseMs)) {
-          await handle(needed, row);
+          await handle(needed, row, leaseMs);
           if (stopped) return;
         }
       } while (again && !stopped);
@@ -122,7 +148,8 @@ export function startMailWorker(
       stopped = true;
       outboxFilled.off('filled', nudge);
       if (timer !== null) clearTimeout(timer);
-      await running;
+      // A message that takes longer is left to its lease: it is sent again after the next start, under the same Message-ID.
+      await Promise.race([running, new Promise((resolve) => setTimeout(resolve, patience).unref())]);
       needed.transport?.close();
     },
   };

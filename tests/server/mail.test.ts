@@ -251,6 +251,26 @@ describe('when the mail server does not take it', () => {
 });
 
 describe('the worker', () => {
+  test('keeps a message for itself as long as a slow mail server takes', async () => {
+    let arrived = 0;
+    const slow = new SMTPServer({
+      authOptional: true,
+      disabledCommands: ['STARTTLS'],
+      onData(stream, _session, done) {
+        arrived += 1;
+        stream.resume().on('end', () => setTimeout(done, 600));
+      },
+    });
+    await new Promise<void>((resolve) => slow.listen(0, '127.0.0.1', resolve));
+    closing.push(() => new Promise((resolve) => slow.close(() => resolve())));
+    const url = `smtp://127.0.0.1:${(slow.server.address() as AddressInfo).port}`;
+    work({ url, leaseMs: 150 });
+    work({ url, leaseMs: 150 });
+    await enqueue(mail());
+    await allIn('sent');
+    expect(arrived).toBe(1);
+  });
+
   test('outlives a database that fails for a moment', async () => {
     const { url, until: received } = await sink();
     await server.db.schema.renameTable('mail_messages', 'mail_away');
