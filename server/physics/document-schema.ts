@@ -1,5 +1,5 @@
 import { z } from 'zod';
-import type { DocumentField } from './design-fields';
+import type { DocumentField } from './document-field';
 import { formatQuantity, parseQuantity } from './quantity';
 
 /** Why a number is outside what its field takes; undefined where it is inside. */

@@ -186,7 +186,8 @@ function crossTerms(document: DesignDocument, drive: Vibration, slopes: readonly
         );
       const corners = [at(1, 1), at(1, -1), at(-1, 1), at(-1, -1)];
       const [pp, pm, mp, mm] = corners;
-      if (pp == null || pm == null || mp == null || mm == null) continue;
+      if (typeof pp !== 'number' || typeof pm !== 'number' || typeof mp !== 'number' || typeof mm !== 'number')
+        continue;
       sum += ((pp - pm - mp + mm) / 4) ** 2;
     }
   }

@@ -1,5 +1,5 @@
-import { dimensions } from './quantity-units';
-import type { Dimension, DimensionDescription } from './quantity-units';
+import { dimensions } from './quantity-dimensions';
+import type { Dimension, DimensionDescription } from './quantity-dimensions';
 
 const prefixSymbols: Readonly<Record<number, string>> = {
   [-15]: 'f',

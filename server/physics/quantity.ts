@@ -1,8 +1,10 @@
-import { dimensionWith, dimensions, unitOf } from './quantity-units';
-import type { Dimension, DimensionDescription, DimensionExponents, UnitScale } from './quantity-units';
+import { dimensionWith, dimensions } from './quantity-dimensions';
+import type { Dimension, DimensionDescription } from './quantity-dimensions';
+import { unitOf } from './quantity-units';
+import type { DimensionExponents, UnitScale } from './quantity-units';
 
-export { dimensions } from './quantity-units';
-export type { Dimension } from './quantity-units';
+export { dimensions } from './quantity-dimensions';
+export type { Dimension } from './quantity-dimensions';
 export { formatQuantity, quantityParts } from './quantity-format';
 
 /** What a typed text was understood to be, or why not in plain words. */

@@ -1,4 +1,4 @@
-import type { DocumentField } from './design-fields';
+import type { DocumentField } from './document-field';
 
 /** Every number of a vibration document by path pattern; limits are SI. */
 export const vibrationFields = {

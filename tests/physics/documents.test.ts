@@ -327,13 +327,9 @@ describe('bad vibration documents', () => {
   });
 
   test('ten million samples are refused at once', () => {
+    const acceleration = new Array<number>(1e7).fill(0);
     const started = performance.now();
-    const reading = readVibrationDocument({
-      kind: 'recording',
-      rate: 1000,
-      unit: 'g',
-      acceleration: new Array(1e7).fill(0),
-    });
+    const reading = readVibrationDocument({ kind: 'recording', rate: 1000, unit: 'g', acceleration });
     expect(reading).toMatchObject({ ok: false, issues: [{ path: 'acceleration', limit: 2_000_000 }] });
     expect(performance.now() - started).toBeLessThan(1000);
   });

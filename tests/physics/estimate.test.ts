@@ -5,8 +5,10 @@ import type { Estimate } from '#physics/estimate';
 import { handbookValue, numberOf, referenceCase } from '../support/handbook';
 import { anyDesign, resistorOnTone } from './arbitrary-documents';
 
-const { design } = referenceCase('D1-01');
-const modelled = referenceCase('D2-01').design;
+type Document = Record<string, unknown> & { coils: Record<string, unknown>[]; magnets: Record<string, unknown>[] };
+
+const design = referenceCase('D1-01').design as Document;
+const modelled = referenceCase('D2-01').design as Document;
 const tone = { kind: 'tone', frequency: 50, acceleration: 1, as: 'peak' };
 const relative = (value: number | null, expected: number): number => Math.abs((value ?? NaN) / expected - 1);
 
@@ -174,7 +176,7 @@ describe('laws', () => {
   });
 
   test('turns times n: EMF × n, resistance × n² in the same window, the same power into n² times the load', () => {
-    const base = { ...modelled, asMeasured: null } as { coils: Record<string, unknown>[] };
+    const base = { ...modelled, asMeasured: null };
     const n = 0.25;
     const wire = { diameter: 1e-4 / Math.sqrt(n), overallDiameter: 1.17e-4 / Math.sqrt(n) };
     const few = {
@@ -189,7 +191,7 @@ describe('laws', () => {
   });
 
   test('reciprocity: the coil moved by −x sees what the magnet moved by x gives', () => {
-    const base = { ...modelled, asMeasured: null } as { coils: Record<string, unknown>[] };
+    const base = { ...modelled, asMeasured: null };
     const moved = { ...base, coils: [{ ...base.coils[0], at: -0.005567299 - 0.002 }] };
     const magnet = estimate(base, tone, { positions: [0.002] });
     const coil = estimate(moved, tone, { positions: [0] });
@@ -197,10 +199,7 @@ describe('laws', () => {
   });
 
   test('polarity and sense turn the sign of the coupling and nothing else', () => {
-    const base = { ...modelled, asMeasured: null } as {
-      coils: Record<string, unknown>[];
-      magnets: Record<string, unknown>[];
-    };
+    const base = { ...modelled, asMeasured: null };
     const plain = estimate(base, tone);
     for (const turned of [
       { ...base, coils: [{ ...base.coils[0], sense: -1 }] },
@@ -217,7 +216,7 @@ describe('cautions', () => {
   const codes = (document: unknown, vibration: unknown = tone, options = {}): string[] =>
     estimate(document, vibration, options).cautions.map(({ code }) => code);
   const change = (changes: object): unknown => ({ ...design, ...changes });
-  const base = design as { coils: Record<string, unknown>[]; magnets: Record<string, unknown>[] };
+  const base = design;
 
   test.each<[string, unknown, unknown]>([
     ['off-resonance', design, { ...tone, frequency: 49 }],
