@@ -75,7 +75,10 @@ rmSync(folder, { recursive: true, force: true });
 if (results === null) stop('✗ The test runner left no results.');
 
 const skipped = results.numPendingTests + results.numTodoTests;
-// A file that cannot even be loaded counts, though none of its tests ran.
-const failed = code === 0 ? results.numFailedTests : Math.max(1, results.numFailedTests, results.numFailedTestSuites);
+// A file that cannot even be loaded has no failed test and is counted itself; so is an error outside of any test.
+const brokenFiles = results.testResults.filter(
+  ({ status, assertionResults }) => status === 'failed' && assertionResults.length === 0,
+);
+const failed = results.numFailedTests + brokenFiles.length || (code === 0 ? 0 : 1);
 console.log(`\n${results.numPassedTests} passed, ${failed} failed${skipped > 0 ? `, ${skipped} skipped` : ''}`);
 process.exit(code === 0 && failed === 0 && results.numPassedTests > 0 ? 0 : 1);

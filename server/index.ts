@@ -21,6 +21,10 @@ async function serve(): Promise<void> {
   const carriedOut = await migrateToLatest(db);
   if (carriedOut.length > 0) log.info({ migrations: carriedOut }, 'Database brought up to date');
 
+  if ((await db('people').first('id')) === undefined) {
+    log.warn('Nobody can sign in yet. For the demonstration: npm run seed. For real work: npm run setup -- --no-demo');
+  }
+
   const { smtpUrl } = config.mail;
   const mailWorker = startMailWorker({
     db,
