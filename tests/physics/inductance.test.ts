@@ -170,7 +170,15 @@ describe('inductance of flat coils', () => {
     let sum = 0;
     for (const one of parts) for (const two of parts) sum += mutualOfFlatCoils(one, two);
     expect(relative(sum, selfOfFlat(whole))).toBeLessThan(1e-7);
-    const frame: CoilShape = { ...whole, shape: 'rectangular', inner: [4e-3, 10e-3], outer: [12e-3, 22e-3] };
+    const frame: CoilShape = {
+      shape: 'rectangular',
+      inner: [4e-3, 10e-3],
+      outer: [12e-3, 22e-3],
+      length: 4e-3,
+      at: [0, 0, 0],
+      turns: 100,
+      sense: 1,
+    };
     const halves = [-1e-3, 1e-3].map((z): CoilShape => ({ ...frame, length: 2e-3, at: [0, 0, z], turns: 50 }));
     sum = 0;
     for (const one of halves) for (const two of halves) sum += mutualOfFlatCoils(one, two);
