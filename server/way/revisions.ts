@@ -4,6 +4,7 @@ import { Issue } from '#contracts/error';
 import { Estimate } from '#contracts/estimates';
 import { RevisionFacts } from '#workflows/revision';
 import type { Actor, RevisionState } from '#workflows/revision';
+import { sha256 } from '../canonical-json';
 import { conflict, notFound } from '../errors';
 
 /** A row of `revisions`. Features read rows through `loadRevision` and change them through the steps of the way. */
@@ -46,6 +47,8 @@ export interface StoredRevision {
   document: unknown;
   documentDigest: string | null;
   estimate: Estimate | null;
+  /** SHA-256 of the estimate as it is stored. */
+  estimateDigest: string | null;
   briefVersion: number | null;
   submittedAt: string | null;
   continuedFromId: string | null;
@@ -70,6 +73,7 @@ const parsed = (row: RevisionRow): StoredRevision => ({
   document: row.document === null ? null : json(row.document),
   documentDigest: row.document_digest,
   estimate: row.estimate === null ? null : Estimate.parse(json(row.estimate)),
+  estimateDigest: row.estimate === null ? null : sha256(row.estimate),
   briefVersion: row.brief_version,
   submittedAt: row.submitted_at,
   continuedFromId: row.continued_from_id,

@@ -109,7 +109,7 @@ export function digestOf({ revision, design, brief, authors, remarks, signatures
       brief: { number: brief.number, version: brief.version, document: brief.document },
       document: revision.document ?? revision.draft,
       documentDigest: revision.documentDigest,
-      estimate: revision.estimate,
+      estimate: revision.estimateDigest,
       authors: authors.map(({ id }) => id),
       remarks,
       signatures,
