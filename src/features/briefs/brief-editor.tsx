@@ -28,18 +28,27 @@ interface BriefEditorProps {
 /** Writing or changing a brief: keeps the text while it is written, puts what is wrong at its field, never overwrites. */
 export function BriefEditor({ brief, header, saveLabel, save, onSaved }: BriefEditorProps) {
   const formId = useId();
-  const draft = useKeptDraft<BriefFields>(brief?.id ?? 'new');
+  const { found, keep, forget } = useKeptDraft<BriefFields>(brief?.id ?? 'new');
   // Text that was found goes on from the version it was written on: a newer one is told about, not overwritten.
-  const [base, setBase] = useState(draft.found === null ? (brief?.version ?? null) : draft.found.version);
-  const [restored, setRestored] = useState(draft.found !== null);
+  const [base, setBase] = useState(found === null ? (brief?.version ?? null) : found.version);
+  const [restored, setRestored] = useState(found !== null);
+  const [merged, setMerged] = useState(false);
   const [changed, setChanged] = useState<Change[] | null>(null);
-  const saved = brief === null ? emptyBrief : () => briefFields(brief.document);
-  const [initial] = useState(() => (draft.found === null ? saved() : { ...saved(), ...draft.found.values }));
-  const { keep, forget } = draft;
+  const saved = () => (brief === null ? emptyBrief() : briefFields(brief.document));
+  const [start] = useState(() => {
+    const from = saved();
+    return found === null
+      ? { from, values: null }
+      : { from: { ...from, ...found.from }, values: { ...from, ...found.values } };
+  });
+  const [from, setFrom] = useState(start.from);
   const form = useBriefForm(
-    initial,
-    useCallback((values) => keep(values, base), [keep, base]),
+    start,
+    useCallback((values) => keep(values, from, base), [keep, from, base]),
   );
+  // Read here so that the form keeps count of it: merging needs to know which fields were changed.
+  const { isSubmitting, dirtyFields } = form.formState;
+  void dirtyFields;
 
   const send = (version: number | null) =>
     form.handleSubmit(async (fields) => {
@@ -58,47 +67,49 @@ export function BriefEditor({ brief, header, saveLabel, save, onSaved }: BriefEd
       }
     });
 
-  const startAgain = () => {
-    forget();
-    form.reset(saved());
+  const goOnFrom = (fields: BriefFields) => {
+    setFrom(fields);
     setRestored(false);
     setChanged(null);
     setBase(brief?.version ?? null);
+  };
+  const startAgain = () => {
+    forget();
+    const fields = saved();
+    form.reset(fields);
+    goOnFrom(fields);
+    setMerged(false);
+  };
+  const merge = () => {
+    const fields = saved();
+    form.reset(fields, { keepDirtyValues: true });
+    goOnFrom(fields);
+    setMerged(true);
   };
 
   return (
     <>
       {header(
-        <Button
-          variant="primary"
-          type="submit"
-          form={formId}
-          pending={form.formState.isSubmitting}
-          disabled={changed !== null}
-        >
+        <Button variant="primary" type="submit" form={formId} pending={isSubmitting} disabled={changed !== null}>
           {saveLabel}
         </Button>,
       )}
       <PageBody className="flex flex-col gap-5">
-        {restored && draft.found ? (
+        {merged ? (
+          <Caution severity="info" title="Both are below." className="max-w-6xl">
+            Fields that you changed hold your text, the others what is saved. Look it over, then save.
+          </Caution>
+        ) : null}
+        {restored && found ? (
           <Caution severity="info" title="Text that was not saved is shown." className="max-w-6xl">
-            It was written on this device {formatAgo(draft.found.at)}.{' '}
+            It was written on this device {formatAgo(found.at)}.{' '}
             <Button size="small" onPress={startAgain}>
               Discard it
             </Button>
           </Caution>
         ) : null}
         {changed !== null && brief !== null ? (
-          <StaleBrief
-            changed={changed}
-            brief={brief}
-            onMine={() => {
-              setBase(brief.version);
-              setChanged(null);
-              void send(brief.version)();
-            }}
-            onTheirs={startAgain}
-          />
+          <StaleBrief changed={changed} brief={brief} onMerge={merge} onTheirs={startAgain} />
         ) : null}
         <BriefForm id={formId} form={form} onSubmit={() => void send(base)()} />
       </PageBody>
@@ -109,12 +120,12 @@ export function BriefEditor({ brief, header, saveLabel, save, onSaved }: BriefEd
 interface StaleBriefProps {
   changed: readonly Change[];
   brief: Brief;
-  onMine: () => void;
+  onMerge: () => void;
   onTheirs: () => void;
 }
 
 /** Somebody saved in the meantime: says what, and asks whose text is to hold. */
-function StaleBrief({ changed, brief, onMine, onTheirs }: StaleBriefProps) {
+function StaleBrief({ changed, brief, onMerge, onTheirs }: StaleBriefProps) {
   return (
     <div role="alert" className="flex max-w-6xl flex-col items-start gap-2 border-l-4 border-amber bg-wash px-4 py-3">
       <h2>Somebody changed this brief while you wrote</h2>
@@ -130,7 +141,7 @@ function StaleBrief({ changed, brief, onMine, onTheirs }: StaleBriefProps) {
       </ul>
       <p>Nothing was saved; your text is kept below. The brief is now at version {brief.version}.</p>
       <div className="flex flex-wrap gap-2">
-        <Button onPress={onMine}>Save mine over it</Button>
+        <Button onPress={onMerge}>Keep my changes, take theirs for the rest</Button>
         <Button onPress={onTheirs}>Discard mine and load theirs</Button>
       </div>
     </div>

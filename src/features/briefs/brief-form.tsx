@@ -23,13 +23,23 @@ interface BriefFormProps {
   onSubmit: () => void;
 }
 
+interface BriefFormStart {
+  /** What the text is written on. */
+  from: BriefFields;
+  /** Unsaved text that goes on from it; null where there is none. */
+  values: BriefFields | null;
+}
+
 /** The form's state, handing every change to the keeper of unsaved text. */
 export function useBriefForm(
-  defaultValues: BriefFields,
+  { from, values: unsaved }: BriefFormStart,
   keep: (values: BriefFields) => void,
 ): UseFormReturn<BriefFields> {
-  const form = useForm<BriefFields>({ defaultValues });
-  const { subscribe } = form;
+  const form = useForm<BriefFields>({ defaultValues: from });
+  const { subscribe, reset } = form;
+  useEffect(() => {
+    if (unsaved !== null) reset(unsaved, { keepDefaultValues: true });
+  }, [reset, unsaved]);
   useEffect(
     () =>
       subscribe({

@@ -8,13 +8,15 @@ interface Kept<T> {
   /** Version of the brief that the text was written on; null for a new one. */
   version: number | null;
   values: T;
+  /** What the text was written on, to tell the own changes from somebody else's. */
+  from: T;
 }
 
 function read<T>(name: string): Kept<T> | null {
   try {
     const text = window.localStorage.getItem(keyOf(name));
     const found: unknown = text === null ? null : JSON.parse(text);
-    return found !== null && typeof found === 'object' && 'values' in found && 'at' in found
+    return found !== null && typeof found === 'object' && 'values' in found && 'from' in found && 'at' in found
       ? (found as Kept<T>)
       : null;
   } catch {
@@ -26,7 +28,7 @@ export interface KeptDraft<T> {
   /** What was found when the page opened. */
   found: Kept<T> | null;
   /** `version` is the one that the text is written on; null for a new brief. */
-  keep: (values: T, version: number | null) => void;
+  keep: (values: T, from: T, version: number | null) => void;
   forget: () => void;
 }
 
@@ -43,10 +45,10 @@ export function useKeptDraft<T>(name: string): KeptDraft<T> {
   // Leaving the page within the pause must not lose its last words.
   useEffect(() => () => settle(true), [settle]);
   const keep = useCallback(
-    (values: T, version: number | null) => {
+    (values: T, from: T, version: number | null) => {
       settle(false);
       const write = () => {
-        const kept: Kept<T> = { at: new Date().toISOString(), version, values };
+        const kept: Kept<T> = { at: new Date().toISOString(), version, values, from };
         try {
           window.localStorage.setItem(keyOf(name), JSON.stringify(kept));
         } catch {

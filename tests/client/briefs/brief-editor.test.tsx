@@ -1,5 +1,6 @@
 import { screen, waitFor, within } from '@testing-library/react';
 import userEvent from '@testing-library/user-event';
+import { useState } from 'react';
 import { describe, expect, it, vi } from 'vitest';
 import { Brief } from '#contracts/briefs';
 import { BriefEditor } from '../../../src/features/briefs/brief-editor';
@@ -71,21 +72,42 @@ describe('the editor of a brief', () => {
     expect(document.activeElement?.getAttribute('aria-invalid')).toBe('true');
   });
 
-  it('tells of a newer version, keeps the text, and overwrites only when asked to', async () => {
-    const changed = [{ version: 3, by: 'Bram Okafor', at, what: 'The power needed was changed' }];
+  it('tells of a newer version, keeps the own changes, and takes theirs for the rest', async () => {
+    const changed = [{ version: 3, by: 'Bram Okafor', at, what: 'Changed the place.' }];
+    const newer: Brief = { ...brief, version: 3, document: { ...briefDocument, place: 'Free end' } };
     const save = vi.fn<Save>((_, version) =>
       version === 2 ? Promise.reject(new RequestError(409, 'conflict', 'Newer.', { changed })) : Promise.resolve(brief),
     );
-    const { onSaved } = edit(save);
+    const onSaved = vi.fn();
+    function Page() {
+      const [shown, setShown] = useState(brief);
+      return (
+        <>
+          <button onClick={() => setShown(newer)}>refetch</button>
+          <BriefEditor
+            brief={shown}
+            saveLabel="Save the brief"
+            save={save}
+            onSaved={onSaved}
+            header={(button) => button}
+          />
+        </>
+      );
+    }
+    drawn(<Page />);
     await userEvent.type(field('Machine'), ' 2');
     await press('Save the brief');
     const notice = await screen.findByRole('alert');
-    expect(within(notice).getByText(/The power needed was changed/)).toBeTruthy();
+    expect(within(notice).getByText(/Changed the place/)).toBeTruthy();
     expect(field('Machine').value).toBe('Circulation pump 2');
-    expect(save).toHaveBeenCalledTimes(1);
     expect(onSaved).not.toHaveBeenCalled();
-    await press('Save mine over it');
-    await waitFor(() => expect(save).toHaveBeenCalledTimes(2));
+    await press('refetch');
+    await press('Keep my changes, take theirs for the rest');
+    expect(field('Machine').value).toBe('Circulation pump 2');
+    expect(field('Place on the machine').value).toBe('Free end');
+    await press('Save the brief');
+    await waitFor(() => expect(onSaved).toHaveBeenCalled());
+    expect(save).toHaveBeenLastCalledWith({ ...briefDocument, machine: 'Circulation pump 2', place: 'Free end' }, 3);
   });
 
   it('keeps unsaved text on this device and offers it again', async () => {
