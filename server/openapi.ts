@@ -19,7 +19,6 @@ import { allRoutes } from '#contracts/routes';
 import * as runs from '#contracts/runs';
 import * as session from '#contracts/session';
 import { roleWords } from '#workflows/revision';
-import { canonicalJson } from './canonical-json';
 
 const contracts = [
   errors,
@@ -106,20 +105,32 @@ function pathOf(name: string, contract: RouteContract): RouteConfig {
 
 const isObject = (value: unknown): value is Record<string, unknown> => typeof value === 'object' && value !== null;
 
-/** The canonical text of a subtree; each is written out once. */
-function textOf(texts: WeakMap<object, string>, value: unknown): string {
-  if (!isObject(value)) return canonicalJson(value);
-  let text = texts.get(value);
-  if (text === undefined) {
-    text = Array.isArray(value)
-      ? `[${value.map((item) => textOf(texts, item)).join(',')}]`
-      : `{${Object.keys(value)
-          .sort()
-          .map((key) => `${key}:${textOf(texts, value[key])}`)
-          .join(',')}}`;
-    texts.set(value, text);
-  }
-  return text;
+/** Gives equal subtrees equal numbers, each from the numbers of its members: no subtree is written out twice. */
+function numbering(): (value: unknown) => number {
+  const numbers = new Map<string, number>();
+  const known = new WeakMap<object, number>();
+  const numberOf = (value: unknown): number => {
+    if (!isObject(value)) return numbered(JSON.stringify(value) ?? 'absent');
+    let found = known.get(value);
+    if (found === undefined) {
+      found = Array.isArray(value)
+        ? numbered(`[${value.map(numberOf).join()}]`)
+        : numbered(
+            `{${Object.keys(value)
+              .sort()
+              .map((key) => `${key}:${numberOf(value[key])}`)
+              .join()}}`,
+          );
+      known.set(value, found);
+    }
+    return found;
+  };
+  const numbered = (form: string): number => {
+    const found = numbers.get(form) ?? numbers.size;
+    numbers.set(form, found);
+    return found;
+  };
+  return numberOf;
 }
 
 /** Puts a reference wherever a subtree says exactly what a named schema says. */
@@ -151,13 +162,13 @@ function generate(version: string): { openapi: string; [part: string]: unknown }
       item.get?.responses?.['200']?.content?.['application/json']?.schema,
     ]);
 
-  const texts = new WeakMap<object, string>();
-  const names = new Map<string, string>();
+  const numberOf = numbering();
+  const names = new Map<number, string>();
   for (const [name, schema] of schemas) {
-    const text = textOf(texts, schema);
-    if (!names.has(text)) names.set(text, name);
+    const number = numberOf(schema);
+    if (!names.has(number)) names.set(number, name);
   }
-  const nameOf = (value: object) => names.get(textOf(texts, value));
+  const nameOf = (value: object) => names.get(numberOf(value));
   return {
     openapi: '3.1.0',
     info: {
@@ -170,7 +181,7 @@ function generate(version: string): { openapi: string; [part: string]: unknown }
     components: {
       schemas: Object.fromEntries(
         schemas
-          .filter(([name, schema]) => names.get(textOf(texts, schema)) === name)
+          .filter(([name, schema]) => names.get(numberOf(schema)) === name)
           .map(([name, schema]) => [name, withReferences(schema, nameOf, name)]),
       ),
       securitySchemes: { session: { type: 'apiKey', in: 'cookie', name: 'tremolode-session' } },
