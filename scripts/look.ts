@@ -1,12 +1,12 @@
 import { mkdirSync, rmSync, writeFileSync } from 'node:fs';
 import { join } from 'node:path';
-import type { Browser, BrowserContext } from 'playwright-core';
-import { addressOf, demoPassword } from '#server/cli/demo/team';
+import type { Browser } from 'playwright-core';
 import { axeViolations, launchBrowser, openContext, settled, watchErrors } from '../tests/support/browser';
 import type { Theme } from '../tests/support/browser';
+import { Profiles } from '../tests/support/profiles';
 import { startProduction } from '../tests/support/production';
-import { screens } from './look-screens';
-import type { Screen } from './look-screens';
+import { screens } from '../tests/support/screens';
+import type { Screen } from '../tests/support/screens';
 
 /**
  * Photographs every screen of the seeded production build in its main states, both themes, three widths, into look/ with a
@@ -22,33 +22,15 @@ const widths = widthsAt < 0 ? [390, 1440, 2560] : (process.argv[widthsAt + 1] ??
 const themes: Theme[] = ['light', 'dark'];
 const heights: Record<number, number> = { 390: 844, 1440: 900, 2560: 1440 };
 
-type Profile = Awaited<ReturnType<BrowserContext['storageState']>>;
-const profiles = new Map<Screen['as'], Profile>();
-
-/** Signs a person in once; later pages start with the same cookies. */
-async function profileOf(browser: Browser, url: string, person: Screen['as']): Promise<Profile | undefined> {
-  if (person === 'nobody' || profiles.has(person)) return profiles.get(person);
-  const context = await browser.newContext();
-  const page = await context.newPage();
-  await page.goto(`${url}/sign-in`);
-  await page.getByLabel('E-mail address').fill(addressOf(person));
-  await page.getByLabel('Password', { exact: true }).fill(demoPassword);
-  await page.getByRole('button', { name: 'Sign in' }).click();
-  await page.waitForURL((address) => !address.pathname.startsWith('/sign-in'));
-  const profile = await context.storageState();
-  profiles.set(person, profile);
-  await context.close();
-  return profile;
-}
-
 async function photograph(
   browser: Browser,
+  profiles: Profiles,
   url: string,
   screen: Screen,
   theme: Theme,
   width: number,
 ): Promise<string[]> {
-  const profile = await profileOf(browser, url, screen.as);
+  const profile = await profiles.of(screen.as);
   const context = await openContext(browser, theme, width, heights[width] ?? 900, profile);
   const page = await context.newPage();
   const remarks = watchErrors(page, screen.expectedErrors ?? []);
@@ -92,12 +74,15 @@ if (words.length === 0) rmSync(folder, { recursive: true, force: true });
 mkdirSync(folder, { recursive: true });
 const production = await startProduction();
 const browser = await launchBrowser();
+const profiles = new Profiles(browser, production.url);
 const remarks: string[] = [];
 try {
   for (const screen of wanted) {
     for (const width of widths) {
       // Both themes at once: one machine core each.
-      const both = await Promise.all(themes.map((theme) => photograph(browser, production.url, screen, theme, width)));
+      const both = await Promise.all(
+        themes.map((theme) => photograph(browser, profiles, production.url, screen, theme, width)),
+      );
       remarks.push(...both.flat());
     }
     await contactSheet(browser, screen.name);

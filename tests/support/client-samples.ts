@@ -1,4 +1,5 @@
 import type { BriefDocument } from '#contracts/briefs';
+import type { Estimate } from '#contracts/estimates';
 import type { Instrument } from '#contracts/instruments';
 import type { Requirement } from '#contracts/requirement';
 import type { Revision } from '#contracts/revisions';
@@ -127,4 +128,60 @@ export const run: Run = {
   whyNotRecord: null,
   availableEvents: ['stopRun'],
   whyNot: { signResult: 'Still without a reading: Power at 50 Hz.' },
+};
+
+export const estimate: Estimate = {
+  engine: '1.0.0',
+  digest,
+  coil: { resistance: 103, inductance: 0.0137, wireLength: 47, fillFactor: 0.436, copperMass: 0.0033, windable: true },
+  mechanics: {
+    movingMass: 0.025,
+    restPosition: 0,
+    stiffness: 2467,
+    cubic: 0,
+    naturalFrequency: 50,
+    dampingCoefficient: 0.0524,
+    quality: 150,
+  },
+  curve: { couplingAtRest: -6.06, couplingPeak: 6.06, couplingPeakAt: -0.0111 },
+  response: {
+    method: 'phasors',
+    converged: true,
+    openCircuitEmfRms: 2.05,
+    openCircuitEmfPeak: 2.9,
+    emfRms: 1.15,
+    loadVoltageRms: 1.02,
+    loadVoltageMean: null,
+    coilCurrentRms: 0.00127,
+    loadPower: 0.0013,
+    displacementPeak: 0.00086,
+    displacementRms: 0.00061,
+    phase: -1.57,
+    harmonicDistortion: 0,
+    stopContact: false,
+    branches: [],
+  },
+  power: {
+    mechanicalIn: 0.003,
+    load: 0.0013,
+    coil: 0.00017,
+    rectifier: 0,
+    converter: 0,
+    mechanicalLoss: 0.0015,
+    stops: 0,
+    stored: 0,
+    residual: 1e-9,
+  },
+  bounds: {
+    resonant: 0.0015,
+    travelLimited: null,
+    broadband: null,
+    effectiveness: 0.87,
+    normalisedPowerDensity: null,
+    bestResistiveLoad: 804,
+    bestLoadPower: 0.0013,
+  },
+  waveforms: null,
+  cautions: [],
+  notes: [],
 };
