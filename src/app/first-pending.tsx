@@ -3,8 +3,9 @@ import { Pending } from '../ui/pending';
 /** Before anything is known, on the first load: the frame, without flashing words. */
 export function FirstPending() {
   return (
-    <div className="p-10">
+    <main className="p-10">
+      <h1 className="sr-only">Tremolode</h1>
       <Pending label="Loading Tremolode" lines={5} className="max-w-xl" />
-    </div>
+    </main>
   );
 }

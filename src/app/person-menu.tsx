@@ -1,6 +1,5 @@
 import { KeyRound, LogOut, MonitorX, User, UserRound } from 'lucide-react';
 import { useState } from 'react';
-import { useNavigate } from 'react-router-dom';
 import type { Me } from '#contracts/session';
 import { roleWords } from '#workflows/revision';
 import { PasswordDialog } from '../features/session/password-dialog';
@@ -22,15 +21,12 @@ interface PersonMenuProps {
 /** Who is signed in, the theme, the password, and the way out. */
 export function PersonMenu({ me, placement, compact }: PersonMenuProps) {
   const { choice } = useTheme();
-  const navigate = useNavigate();
   const [open, setOpen] = useState<'password' | 'everywhere' | null>(null);
   const here = useSignOut('here');
   const everywhere = useSignOut('everywhere');
   const words = me.roles.map((role) => roleWords[role]);
-  const left = () => void navigate('/sign-in', { replace: true });
   const signOut = () =>
     here.mutate(undefined, {
-      onSuccess: left,
       onError: (error) => tell.failed('Not signed out', { detail: messageOf(error) }),
     });
   return (
@@ -45,7 +41,9 @@ export function PersonMenu({ me, placement, compact }: PersonMenuProps) {
             <Button variant="quiet" className="w-full justify-start! px-2.5! text-left! font-normal!">
               <span className="min-w-0">
                 <span className="block truncate">{me.name}</span>
-                <span className="block truncate text-sm text-graphite">{words.join(', ') || 'no roles yet'}</span>
+                <span className="line-clamp-2 text-sm leading-tight text-graphite">
+                  {words.join(', ') || 'no roles yet'}
+                </span>
               </span>
             </Button>
           )
@@ -87,7 +85,7 @@ export function PersonMenu({ me, placement, compact }: PersonMenuProps) {
         confirmLabel="Sign out everywhere"
         isOpen={open === 'everywhere'}
         onClose={() => setOpen(null)}
-        onConfirm={() => everywhere.mutateAsync().then(left)}
+        onConfirm={() => everywhere.mutateAsync()}
       >
         <p>Ends your session on this and every other device. Saved drafts stay; you sign in again to go on.</p>
       </ConfirmDialog>

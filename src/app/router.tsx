@@ -6,47 +6,62 @@ import { RootError, RouteError } from '../routes/error';
 import { Component as NotFound } from '../routes/not-found';
 import { FirstPending } from './first-pending';
 
-type Lazy = NonNullable<RouteObject['lazy']>;
-const screenFiles = import.meta.glob<Awaited<ReturnType<Extract<Lazy, () => unknown>>>>([
-  '../routes/*.tsx',
-  '!../routes/error.tsx',
-  '!../routes/not-found.tsx',
-]);
-
-/** Path and file (src/routes/<name>.tsx) of every screen behind the sign-in. */
-const screens: readonly { path: string; name: string; children?: readonly { path: string; name: string }[] }[] = [
-  { path: 'briefs', name: 'briefs' },
-  { path: 'briefs/new', name: 'brief-new' },
-  { path: 'briefs/:briefId', name: 'brief' },
-  { path: 'briefs/:briefId/edit', name: 'brief-edit' },
-  { path: 'designs', name: 'designs' },
-  { path: 'designs/new', name: 'design-new' },
-  { path: 'designs/:designId', name: 'design' },
-  { path: 'designs/:designId/:letter', name: 'revision' },
-  { path: 'bench', name: 'bench' },
-  { path: 'bench/runs/:runId', name: 'run' },
-  { path: 'catalogue', name: 'catalogue' },
-  { path: 'records', name: 'records' },
-  { path: 'records/:recordId', name: 'record' },
-  {
-    path: 'administration',
-    name: 'administration',
-    children: [
-      { path: 'people', name: 'administration-people' },
-      { path: 'mail', name: 'administration-mail' },
-      { path: 'audit', name: 'administration-audit' },
-    ],
-  },
-  { path: 'account', name: 'account' },
-];
-
-function screen(name: string): Pick<RouteObject, 'lazy' | 'Component' | 'ErrorBoundary'> {
-  const file = screenFiles[`../routes/${name}.tsx`];
-  return file ? { lazy: file, ErrorBoundary: RouteError } : { Component: NotFound, ErrorBoundary: RouteError };
+type LoadScreen = () => Promise<Pick<RouteObject, 'loader' | 'Component'>>;
+interface Screen {
+  path: string;
+  load: LoadScreen;
+  children?: readonly Screen[];
 }
 
+/** Every screen behind the sign-in: its path, and its file, fetched when somebody goes there. */
+const screens: readonly Screen[] = [
+  { path: 'briefs', load: () => import('../routes/briefs') },
+  { path: 'briefs/new', load: () => import('../routes/brief-new') },
+  { path: 'briefs/:briefId', load: () => import('../routes/brief') },
+  { path: 'briefs/:briefId/edit', load: () => import('../routes/brief-edit') },
+  { path: 'designs', load: () => import('../routes/designs') },
+  { path: 'designs/new', load: () => import('../routes/design-new') },
+  { path: 'designs/:designId', load: () => import('../routes/design') },
+  { path: 'designs/:designId/:letter', load: () => import('../routes/revision') },
+  { path: 'bench', load: () => import('../routes/bench') },
+  { path: 'bench/runs/:runId', load: () => import('../routes/run') },
+  { path: 'catalogue', load: () => import('../routes/catalogue') },
+  { path: 'records', load: () => import('../routes/records') },
+  { path: 'records/:recordId', load: () => import('../routes/record') },
+  {
+    path: 'administration',
+    load: () => import('../routes/administration'),
+    children: [
+      { path: 'people', load: () => import('../routes/administration-people') },
+      { path: 'mail', load: () => import('../routes/administration-mail') },
+      { path: 'audit', load: () => import('../routes/administration-audit') },
+    ],
+  },
+  { path: 'account', load: () => import('../routes/account') },
+];
+
+/** Takes loader and component from the file of a screen; a fault of it leaves the rail usable. */
+const lazily = (load: LoadScreen): Pick<RouteObject, 'lazy' | 'ErrorBoundary'> => ({
+  lazy: async () => {
+    const { loader, Component } = await load();
+    return { loader, Component };
+  },
+  ErrorBoundary: RouteError,
+});
+
+const routeOf = ({ path, load, children }: Screen): RouteObject => ({
+  path,
+  ...lazily(load),
+  ...(children ? { children: children.map(routeOf) } : {}),
+});
+
 export const router = createBrowserRouter([
-  { path: '/sign-in', ...screen('sign-in'), ErrorBoundary: RootError, HydrateFallback: FirstPending },
+  {
+    path: '/sign-in',
+    ...lazily(() => import('../routes/sign-in')),
+    ErrorBoundary: RootError,
+    HydrateFallback: FirstPending,
+  },
   {
     id: 'shell',
     path: '/',
@@ -64,12 +79,8 @@ export const router = createBrowserRouter([
       },
     ],
     children: [
-      { index: true, ...screen('desk') },
-      ...screens.map(({ path, name, children }) => ({
-        path,
-        ...screen(name),
-        ...(children ? { children: children.map((child) => ({ path: child.path, ...screen(child.name) })) } : {}),
-      })),
+      { index: true, ...lazily(() => import('../routes/desk')) },
+      ...screens.map(routeOf),
       { path: '*', Component: NotFound },
     ],
   },

@@ -64,6 +64,7 @@ export function Component() {
           <Suspense
             fallback={
               <PageBody>
+                <h1 className="sr-only">Loading</h1>
                 <Pending label="Loading the page" lines={6} />
               </PageBody>
             }

@@ -14,6 +14,8 @@ interface FetchOptions {
 const nothing = z.undefined();
 
 let csrfToken: string | null = null;
+/** Whom this page acts for. Another tab may sign in somebody else with the same cookie: this page must not act for them. */
+let actingAs: string | null = null;
 const signedOutListeners = new Set<() => void>();
 
 /** Calls back when the server no longer knows who asks, so that the page can offer to sign in again in place. */
@@ -22,19 +24,35 @@ export function onSignedOut(listener: () => void): () => void {
   return () => signedOutListeners.delete(listener);
 }
 
-/** Forgets the token, as after signing in or out: the next change asks for the one of the new session. */
+function endSession(): void {
+  csrfToken = null;
+  for (const listener of signedOutListeners) listener();
+}
+
+/** Forgets token and person, as a fresh page does. */
 export function forgetCsrfToken(): void {
   csrfToken = null;
+  actingAs = null;
+}
+
+/** Every answer that carries a session carries the token that belongs to it. */
+function takeSession({ me, csrfToken: token }: SessionAnswer, method: string): void {
+  const person = me?.id ?? null;
+  if (method === 'get' && actingAs !== null && person !== actingAs) endSession();
+  else {
+    csrfToken = token;
+    actingAs = person;
+  }
 }
 
 const keptWords = (method: string) =>
   method === 'get'
     ? 'The server did not answer. What you see is what was last loaded.'
-    : 'The server did not answer, so nothing was sent. What you typed is kept on this page: try again once you are connected.';
+    : 'The server did not answer. What you typed is kept on this page: try again once you are connected.';
 
 async function send(path: string, method: string, body: unknown, signal?: AbortSignal): Promise<Response> {
   const headers: Record<string, string> = { accept: 'application/json' };
-  if (method !== 'get') headers['x-csrf-token'] = csrfToken ?? (await renewCsrfToken());
+  if (method !== 'get') headers['x-csrf-token'] = csrfToken ?? (await renewCsrfToken(path));
   const form = body instanceof FormData;
   if (body !== undefined && !form) headers['content-type'] = 'application/json';
   const init: RequestInit = { method: method.toUpperCase(), headers, credentials: 'same-origin' };
@@ -48,11 +66,20 @@ async function send(path: string, method: string, body: unknown, signal?: AbortS
   }
 }
 
-async function renewCsrfToken(): Promise<string> {
+async function renewCsrfToken(path: string): Promise<string> {
   const response = await send('/session', 'get', undefined);
   if (!response.ok) throw await errorFrom(response);
   const answer = read(SessionAnswer, await response.json(), response);
-  return answer.csrfToken;
+  // Signing in is how a page without a session gets one.
+  if (path === '/session' || actingAs === null) return (csrfToken = answer.csrfToken);
+  takeSession(answer, 'get');
+  if (csrfToken === null)
+    throw new RequestError(
+      401,
+      'unauthenticated',
+      'Your session has ended, so nothing was sent. What you typed is kept.',
+    );
+  return csrfToken;
 }
 
 async function errorFrom(response: Response): Promise<RequestError> {
@@ -83,11 +110,7 @@ async function errorFrom(response: Response): Promise<RequestError> {
 
 function read<T>(schema: z.ZodType<T>, body: unknown, response: Response): T {
   const parsed = schema.safeParse(body);
-  if (parsed.success) {
-    // Every answer that carries a session carries the token that belongs to it.
-    if ((schema as unknown) === SessionAnswer) csrfToken = (parsed.data as SessionAnswer).csrfToken;
-    return parsed.data;
-  }
+  if (parsed.success) return parsed.data;
   const [first] = parsed.error.issues;
   throw new RequestError(
     response.status,
@@ -113,10 +136,7 @@ export async function fetchJson<T>(schema: z.ZodType<T>, path: string, options: 
     error = response.ok ? null : await errorFrom(response);
   }
   if (error) {
-    if (error.code === 'unauthenticated' && path !== '/session') {
-      csrfToken = null;
-      for (const listener of signedOutListeners) listener();
-    }
+    if (error.code === 'unauthenticated' && path !== '/session') endSession();
     throw error;
   }
   if (response.status === 204) return read(schema, undefined, response);
@@ -127,7 +147,9 @@ export async function fetchJson<T>(schema: z.ZodType<T>, path: string, options: 
     if (signal?.aborted) throw new DOMException('Given up', 'AbortError');
     throw new RequestError(response.status, 'unreadable', 'The server’s answer arrived incomplete. Try again.');
   }
-  return read(schema, answer, response);
+  const content = read(schema, answer, response);
+  if ((schema as unknown) === SessionAnswer) takeSession(content as SessionAnswer, method);
+  return content;
 }
 
 type Input<S> = S extends z.ZodType ? z.input<S> : never;

@@ -1,5 +1,4 @@
 import { useState } from 'react';
-import { useNavigate } from 'react-router-dom';
 import { roleWords } from '#workflows/revision';
 import { PasswordDialog } from '../features/session/password-dialog';
 import { useSession, useSignOut } from '../features/session/queries';
@@ -13,7 +12,6 @@ import { RadioGroup } from '../ui/radio-group';
 export function Component() {
   const { me } = useSession();
   const { choice } = useTheme();
-  const navigate = useNavigate();
   const everywhere = useSignOut('everywhere');
   const [open, setOpen] = useState<'password' | 'everywhere' | null>(null);
   return (
@@ -67,7 +65,7 @@ export function Component() {
         confirmLabel="Sign out everywhere"
         isOpen={open === 'everywhere'}
         onClose={() => setOpen(null)}
-        onConfirm={() => everywhere.mutateAsync().then(() => navigate('/sign-in', { replace: true }))}
+        onConfirm={() => everywhere.mutateAsync()}
       >
         <p>Ends your session on this and every other device.</p>
       </ConfirmDialog>

@@ -2,6 +2,7 @@ import { ArrowDown, ArrowUp, Columns3, Download } from 'lucide-react';
 import type { ReactNode } from 'react';
 import { formatCount } from '../lib/format';
 import { IconButton } from './button';
+import { classNames } from './class-names';
 import type { TableColumn } from './data-table-column';
 import { Menu } from './menu';
 import { Select } from './select';
@@ -35,10 +36,15 @@ export function TableToolbar<Row>(props: TableToolbarProps<Row>) {
   return (
     <div className="flex flex-wrap items-center gap-2.5">
       {filterLabel === undefined ? null : (
-        <SearchField label={filterLabel} value={filter} onChange={onFilter} className="max-w-80 flex-1 basis-48" />
+        <SearchField
+          label={filterLabel}
+          value={filter}
+          onChange={onFilter}
+          className="flex-1 basis-full @2xl:max-w-80 @2xl:basis-48"
+        />
       )}
       {props.children}
-      <div className="flex flex-1 basis-56 items-center gap-1 @2xl:hidden">
+      <div className="flex flex-1 basis-40 items-center gap-1 @2xl:hidden">
         <Select
           label="Sort by"
           labelHidden
@@ -57,7 +63,10 @@ export function TableToolbar<Row>(props: TableToolbarProps<Row>) {
         ) : null}
       </div>
       <span className="ml-auto flex items-center gap-1 text-graphite">
-        <span role="status" className="mr-1 text-sm">
+        <span
+          role="status"
+          className={classNames('mr-1 text-sm', counts.found === counts.all && 'sr-only @2xl:not-sr-only')}
+        >
           {counts.found === counts.all
             ? formatCount(counts.all, 'row')
             : `${counts.found} of ${formatCount(counts.all, 'row')}`}

@@ -125,7 +125,11 @@ export function QuantityField(props: QuantityFieldProps) {
       {...fieldRest}
       error={problem}
       hint={hint}
-      below={meaning === undefined ? undefined : <span className="font-mono">{meaning}</span>}
+      below={
+        meaning === undefined ? undefined : (
+          <span className={classNames(understood !== undefined && 'font-mono')}>{meaning}</span>
+        )
+      }
     >
       {(control) => (
         <span className="field-box" data-invalid={problem ? '' : undefined} data-disabled={disabled ? '' : undefined}>

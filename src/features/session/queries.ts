@@ -1,12 +1,17 @@
 import { queryOptions, useMutation, useQueryClient, useSuspenseQuery } from '@tanstack/react-query';
 import { sessionRoutes } from '#contracts/session';
 import type { Me, SessionAnswer } from '#contracts/session';
-import { callRoute, forgetCsrfToken } from '../../lib/fetch-json';
+import { callRoute } from '../../lib/fetch-json';
 
 /** Who is signed in. Kept until signing in or out changes it; the server decides anew at every request anyway. */
 export const sessionQuery = queryOptions({
   queryKey: ['session'],
-  queryFn: ({ signal }) => callRoute(sessionRoutes.readSession, { signal }),
+  queryFn: async ({ signal, client, queryKey }) => {
+    const answer = await callRoute(sessionRoutes.readSession, { signal });
+    const known = client.getQueryData<SessionAnswer>(queryKey);
+    // The session ended meanwhile, or another tab changed it: the page stays, and the person is asked to sign in again.
+    return known?.me && answer.me?.id !== known.me.id ? known : answer;
+  },
   staleTime: 5 * 60_000,
 });
 
@@ -23,15 +28,10 @@ export function useSessionChange() {
   return (answer: SessionAnswer) => client.setQueryData(sessionQuery.queryKey, answer);
 }
 
+/** Signs out, then leaves by loading the page anew: nothing of this person stays in its memory. */
 export function useSignOut(where: 'here' | 'everywhere') {
-  const client = useQueryClient();
   return useMutation({
     mutationFn: () => callRoute(where === 'here' ? sessionRoutes.signOut : sessionRoutes.signOutEverywhere),
-    onSuccess: (answer) => {
-      // Nothing of this person stays in the page's memory.
-      client.clear();
-      forgetCsrfToken();
-      client.setQueryData(sessionQuery.queryKey, answer);
-    },
+    onSuccess: () => window.location.assign('/sign-in'),
   });
 }

@@ -1,6 +1,6 @@
 import { useQueryClient } from '@tanstack/react-query';
 import { useEffect, useState } from 'react';
-import { useNavigate, useRevalidator } from 'react-router-dom';
+import { useRevalidator } from 'react-router-dom';
 import type { Me, SessionAnswer } from '#contracts/session';
 import { onSignedOut } from '../../lib/fetch-json';
 import { Button } from '../../ui/button';
@@ -13,7 +13,6 @@ export function SignInAgain({ me }: { me: Me }) {
   const [ended, setEnded] = useState(false);
   const client = useQueryClient();
   const revalidator = useRevalidator();
-  const navigate = useNavigate();
 
   useEffect(() => onSignedOut(() => setEnded(true)), []);
 
@@ -23,11 +22,6 @@ export function SignInAgain({ me }: { me: Me }) {
     void client.invalidateQueries({ predicate: (query) => query.queryKey[0] !== 'session' });
     void revalidator.revalidate();
   };
-  const leave = () => {
-    setEnded(false);
-    client.clear();
-    void navigate('/sign-in');
-  };
   return (
     <Dialog
       title="Your session has ended"
@@ -35,7 +29,7 @@ export function SignInAgain({ me }: { me: Me }) {
       isOpen={ended}
       onClose={() => setEnded(false)}
       footer={
-        <Button variant="quiet" onPress={leave}>
+        <Button variant="quiet" onPress={() => window.location.assign('/sign-in')}>
           Leave this page and sign in as somebody else
         </Button>
       }

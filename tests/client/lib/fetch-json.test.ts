@@ -127,6 +127,26 @@ describe('fetchJson', () => {
     stop();
   });
 
+  it('never acts for somebody else who signed in in another tab', async () => {
+    const person = (id: string) => ({ id, name: 'N', email: 'n@b.example', roles: [], mayEnter: [] });
+    const mine = person('0b8f8f0e-55a5-4d0c-9d3e-0d3f0a6f1c11');
+    const theirs = person('1c9f8f0e-55a5-4d0c-9d3e-0d3f0a6f1c22');
+    const ended = vi.fn();
+    const stop = onSignedOut(ended);
+    const asked = answering(
+      json(200, { me: mine, csrfToken: 'mine' }),
+      json(403, failure('csrf')),
+      json(200, { me: theirs, csrfToken: 'theirs' }),
+    );
+    await callRoute(sessionRoutes.readSession);
+    const error = await caught(fetchJson(Answer, '/coils', { method: 'post', body: {} }));
+    expect(error).toMatchObject({ code: 'unauthenticated' });
+    expect(error.message).toContain('nothing was sent');
+    expect(ended).toHaveBeenCalledTimes(1);
+    expect(asked).toHaveLength(3);
+    stop();
+  });
+
   it('answers undefined to a 204', async () => {
     answering(session('t'), new Response(null, { status: 204 }));
     const body = { currentPassword: 'old', newPassword: 'long enough indeed' };
