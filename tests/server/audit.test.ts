@@ -160,9 +160,9 @@ describe('the database', () => {
          FROM audit_entries WHERE sequence = 2`,
       ),
     ).rejects.toThrow('audit entries are only appended');
-    await expect(db('audit_entries').insert({ ...row, sequence: 7, hash: 'e'.repeat(64) })).rejects.toThrow(
-      'audit entries are only appended',
-    );
+    const { hash: previous_hash } = await db('audit_entries').where({ sequence: 5 }).first();
+    const next = { ...row, sequence: 7, previous_hash, hash: 'e'.repeat(64) };
+    await expect(db('audit_entries').insert(next)).rejects.toThrow('audit entries are only appended');
     await expect(db('audit_entries').insert({ ...row, sequence: 6, hash: 'e'.repeat(64) })).rejects.toThrow(
       'audit entries are only appended',
     );

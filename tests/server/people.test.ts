@@ -111,8 +111,8 @@ describe('changing a person', () => {
     const browser = await server.visitor();
     await browser.signIn(newcomer.email, newcomer.initialPassword);
     expect((await change(person, { active: false })).status).toBe(200);
-    expect((await browser.get('/api/session')).body.me).toBeNull();
     expect(await server.db('sessions').where({ person_id: person.id })).toEqual([]);
+    expect((await browser.get('/api/session')).body.me).toBeNull();
     expect((await browser.signIn(newcomer.email, newcomer.initialPassword)).status).toBe(401);
   });
 });
