@@ -4,6 +4,7 @@ import { likelyExcursion } from './estimate-vibration';
 import { constantCoupling, measuredCoupling, tableOfLinkage, linkageOfDesign } from './models/coupling';
 import type { CouplingTable } from './models/coupling';
 import type { Circuit, Device, Diode, Vibration } from './models/device';
+import { thermalVoltage } from './models/diode';
 import { fitIssues } from './models/fit-check';
 import type { Linkage } from './models/linkage';
 import { suspensionOnCurve, tabulatedForce } from './models/force-curve';
@@ -14,9 +15,7 @@ import type { Levitation } from './models/levitation';
 import { volumeOf } from './models/magnetisation';
 import { NoRestError, springSuspension } from './models/suspension';
 import type { RestingSuspension } from './models/suspension';
-
-/** Boltzmann constant over elementary charge, V/K (both exact in the SI of 2019). */
-const BOLTZMANN_OVER_CHARGE = 1.380649e-23 / 1.602176634e-19;
+import { remembered } from './remembered';
 
 /** What the magnets of the moving assembly weigh, kg. */
 export function magnetMass(document: DesignDocument): number {
@@ -107,7 +106,7 @@ function diodeOf(diode: DocumentDiode): Diode {
     saturationCurrent: diode.saturationCurrent,
     emissionCoefficient: diode.emissionCoefficient,
     seriesResistance: diode.seriesResistance,
-    thermalVoltage: BOLTZMANN_OVER_CHARGE * (diode.temperature + 273.15),
+    thermalVoltage: thermalVoltage(diode.temperature),
   };
 }
 
@@ -115,6 +114,12 @@ function circuitOf(circuit: DocumentCircuit): Circuit {
   if (circuit.kind === 'resistor') return circuit;
   return { ...circuit, diode: diodeOf(circuit.diode) };
 }
+
+/** Only the windings' shapes decide: asked anew for every load and every tone, answered once. */
+const inductanceOf = remembered(
+  (document: DesignDocument) => inductanceOfCoils(document),
+  ({ layout, coils }) => JSON.stringify([layout, coils]),
+);
 
 /** How far from rest the coupling can matter at all: several times the length of everything, m. */
 function couplingReach(document: DesignDocument, rest: number): number {
@@ -204,7 +209,7 @@ export function prepareDevice(document: DesignDocument, vibration: Vibration, co
       stops: document.stops,
       coupling: couplingOf(document, linkage, rest.restPosition - half, rest.restPosition + half),
       coilResistance,
-      coilInductance: document.asMeasured.coilInductance ?? inductanceOfCoils(document),
+      coilInductance: document.asMeasured.coilInductance ?? inductanceOf(document),
       circuit: circuitOf(document.circuit),
     },
     rest,

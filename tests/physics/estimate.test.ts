@@ -248,8 +248,20 @@ describe('cautions', () => {
     expect(codes(document, vibration)).toContain(code);
   });
 
-  test('the reference device at its resonance has none', () => {
-    expect(codes(design)).toEqual([]);
+  test('the reference device at its resonance has only that of every strong magnet', () => {
+    expect(codes(design)).toEqual(['implants']);
+    // handbook/safety.json#half-millitesla-1 (P1): 68.8 mm from the centre
+    expect(estimate(design, tone).cautions[0]?.message).toContain('64 mm from the magnets');
+  });
+
+  test('large magnets fall under the rules of air transport', () => {
+    const large = { ...base.magnets[0], outerDiameter: '40 mm', length: '60 mm' };
+    const wide = { ...base.coils[0], innerDiameter: '44 mm', outerDiameter: '50 mm' };
+    expect(codes(change({ magnets: [large], coils: [wide], movingMass: { added: 0 } }))).toContain('air-transport');
+  });
+
+  test('levitation needs a guide', () => {
+    expect(codes(referenceCase('F6-01').design)).toContain('needs-guide');
   });
 
   test('hard ferrite is checked in the cold, rare earth in the heat', () => {

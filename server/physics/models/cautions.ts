@@ -1,10 +1,8 @@
 import type { DesignDocument } from '../design-document';
 import type { Caution, Estimate } from '../estimate-shape';
 import { formatQuantity } from '../quantity';
-import { demagnetisingFactor } from './demagnetising';
 import { sweptRadius, travelOf } from './fit-check';
-import type { Magnet } from './magnet';
-import { magnetisationOf, REFERENCE_TEMPERATURE } from './magnetisation';
+import { magnetCautions, strayFieldCautions } from './magnet-cautions';
 import { windingsOf } from './winding';
 
 /** Peak voltage of a touchable part from which equipment standards ask for protection (30 V rms of a sine), V. */
@@ -12,78 +10,6 @@ export const TOUCH_VOLTAGE_PEAK = 42.4;
 
 /** Share of mechanical power left unexplained above which an estimate is not to be trusted. */
 export const TRUSTED_RESIDUAL = 0.005;
-
-/** Share of the intrinsic coercivity taken as the knee: the curve bends before the coercivity itself is reached. */
-export const KNEE_SHARE = 0.9;
-
-type DocumentMagnet = DesignDocument['magnets'][number];
-
-/** Mean demagnetising field and coercivity of a magnet alone in air at one temperature. */
-export interface OperatingPoint {
-  /** Size of the mean demagnetising field, A/m. */
-  readonly demagnetisingField: number;
-  /** Intrinsic coercivity at the temperature, A/m; of 20 °C where its temperature coefficient is not known. */
-  readonly intrinsicCoercivity: number;
-}
-
-/**
- * Operating point against the knee: the mean field N M of the magnet in itself, against the intrinsic coercivity.
- *
- * @param temperature °C
- * Source: magnetometric demagnetising factor (Chen, Brug & Goldfarb 1991), straight-line temperature laws.
- */
-export function operatingPointOf(magnet: DocumentMagnet, temperature: number): OperatingPoint {
-  const { intrinsicCoercivity, intrinsicCoercivityPerKelvin } = magnet.material;
-  const body: Magnet = magnet;
-  return {
-    demagnetisingField: demagnetisingFactor(body) * Math.abs(magnetisationOf(body, temperature)),
-    intrinsicCoercivity: Math.max(
-      0,
-      intrinsicCoercivity * (1 + (intrinsicCoercivityPerKelvin ?? 0) * (temperature - REFERENCE_TEMPERATURE)),
-    ),
-  };
-}
-
-function magnetCautions(document: DesignDocument, temperatures: readonly number[]): Caution[] {
-  const cautions: Caution[] = [];
-  document.magnets.forEach((magnet, index) => {
-    const path = `magnets.${index}.material`;
-    const { material } = magnet;
-    const hottest = Math.max(...temperatures);
-    if (hottest > material.maxTemperature) {
-      cautions.push({
-        code: 'magnet-temperature',
-        severity: 'caution',
-        message: `${formatQuantity(hottest, 'temperature')} is above the highest working temperature of ${material.name}, ${formatQuantity(material.maxTemperature, 'temperature')}.`,
-        path: `${path}.maxTemperature`,
-      });
-    }
-    for (const temperature of temperatures) {
-      const point = operatingPointOf(magnet, temperature);
-      if (point.demagnetisingField <= KNEE_SHARE * point.intrinsicCoercivity) continue;
-      const beyond = point.demagnetisingField > point.intrinsicCoercivity;
-      cautions.push({
-        code: 'demagnetisation',
-        severity: beyond ? 'stop' : 'caution',
-        message: `At ${formatQuantity(temperature, 'temperature')} the magnet’s own field of ${formatQuantity(point.demagnetisingField, 'fieldStrength')} ${beyond ? 'exceeds' : 'comes near'} its intrinsic coercivity of ${formatQuantity(point.intrinsicCoercivity, 'fieldStrength')}: it would lose magnetisation for good. Choose a longer shape or a grade of higher coercivity.`,
-        path,
-      });
-      break;
-    }
-    if (
-      material.intrinsicCoercivityPerKelvin === null &&
-      temperatures.some((temperature) => temperature !== REFERENCE_TEMPERATURE)
-    ) {
-      cautions.push({
-        code: 'coercivity-coefficient-unknown',
-        severity: 'info',
-        message: `The temperature coefficient of the coercivity of ${material.name} is not stated, so demagnetisation was checked with the coercivity at 20 °C.`,
-        path: `${path}.intrinsicCoercivityPerKelvin`,
-      });
-    }
-  });
-  return cautions;
-}
 
 function coilCautions(document: DesignDocument): Caution[] {
   const cautions: Caution[] = [];
@@ -157,6 +83,19 @@ function massCautions(document: DesignDocument, magnetMass: number): Caution[] {
       severity: 'caution',
       message: `The moving mass of ${formatQuantity(document.movingMass.total, 'mass')} is less than the magnets alone weigh, ${formatQuantity(magnetMass, 'mass')}.`,
       path: 'movingMass.total',
+    },
+  ];
+}
+
+function suspensionCautions(document: DesignDocument): Caution[] {
+  if (document.suspension.kind !== 'levitated') return [];
+  return [
+    {
+      code: 'needs-guide',
+      severity: 'caution',
+      message:
+        'A levitated assembly is unstable sideways, with half its axial stiffness (Earnshaw): it needs a guide, whose friction is not modelled.',
+      path: 'suspension',
     },
   ];
 }
@@ -274,6 +213,8 @@ export function cautionsOf(
     ...clashCautions(document),
     ...coilCautions(document),
     ...magnetCautions(document, facts.temperatures),
+    ...strayFieldCautions(document),
+    ...suspensionCautions(document),
     ...massCautions(document, facts.magnetMass),
   ];
   const rank = { stop: 0, caution: 1, info: 2 } as const;
