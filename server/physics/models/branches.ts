@@ -1,4 +1,5 @@
 import { followCurve } from '../kernels/continuation';
+import { describedStarts } from '../kernels/describing-function';
 import { largestMultiplier } from '../kernels/floquet';
 import { HarmonicBalance } from '../kernels/harmonic-balance';
 import type { PortOscillator } from '../kernels/harmonic-balance';
@@ -49,8 +50,9 @@ export function onlyOrbit(oscillator: PortOscillator, omega: number, drive: Floa
 }
 
 /**
- * Every steady orbit of period one that can be reached: along the amplitude of the drive from each equilibrium, along the
- * frequency at full drive from each orbit so found, and from random starts (seeded) for those on curves of their own.
+ * Every steady orbit of period one that can be reached: along the amplitude of the drive from each equilibrium, from each
+ * sinusoid that balances the drive, along the frequency at full drive from each orbit so found, and from random starts
+ * (seeded) for those on curves of their own.
  *
  * @returns orbits by size of their motion, ascending; distinct to 1e-6 of the largest.
  */
@@ -93,6 +95,11 @@ export function everyOrbit(
       most: 300,
     };
     collect(system, start, 0, 1, { ...options, direction: 1 }, (share) => share > -0.01 && share < 3, keep);
+  }
+  if (drive.length === 3) {
+    const [low, high] = [Math.min(...equilibria), Math.max(...equilibria)];
+    const margin = Math.max(high - low, reach);
+    for (const start of describedStarts(oscillator, omega, drive, [low - margin, high + margin])) keep(start);
   }
   if (found.length === 0) keep(linearStart(oscillator, omega, drive, 0));
   for (const orbit of [...found]) {

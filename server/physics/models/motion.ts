@@ -18,6 +18,8 @@ export const SUM = {
   displacement2: 10,
 } as const;
 const SUMS = 11;
+/** A displacement this many times the smallest that matters is a run-away. */
+const ESCAPED = 1e5;
 
 export interface MotionOptions {
   /** Error of a step allowed relative to the largest values met so far. */
@@ -166,7 +168,7 @@ export class Motion {
     this.carry();
   }
 
-  /** Goes on to a time with error control; returns false where a step would have to be absurdly short. */
+  /** Goes on to a time with error control; returns false where the motion runs away. */
   advance(to: number, longest: number): boolean {
     const least = 1e-11 * this.options.period;
     while (to - this.t > least) {
@@ -179,7 +181,7 @@ export class Motion {
         this.lastStep = h * (Number.isFinite(error) ? Math.max(0.2, 0.9 / Math.sqrt(Math.sqrt(error))) : 0.1);
         continue;
       }
-      if (!Number.isFinite(error)) return false;
+      if (!Number.isFinite(error) || Math.abs(this.trialU) > ESCAPED * this.options.smallest) return false;
       const growth = error > 0 ? Math.min(3, 0.9 / Math.sqrt(Math.sqrt(error))) : 3;
       // a step cut short by the end of the stretch says nothing against a longer one
       this.lastStep = h < this.lastStep ? Math.max(this.lastStep, h * growth) : h * growth;
