@@ -8,7 +8,6 @@ const entry = [
   'server/cli/*.ts',
   'scripts/*.{mjs,ts}',
   'migrations/0*.ts',
-  'src/app/main.tsx',
   'src/app/styles.css',
   'src/routes/*.tsx',
   'tests/**/*.test.{ts,tsx}',
