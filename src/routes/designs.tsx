@@ -16,7 +16,11 @@ import { Status } from '../ui/status';
 export const loader = () => queryClient.query({ ...designsQuery, staleTime: 'static' });
 
 const drawing = (document: unknown) => <SmallStrip document={document} />;
-const stateMark = (state: RevisionState) => <Status tone={stateTone[state]}>{stateWords[state]}</Status>;
+const stateMark = (state: RevisionState) => (
+  <Status tone={stateTone[state]} className="whitespace-nowrap">
+    {stateWords[state]}
+  </Status>
+);
 
 export function Component() {
   const { designs, mayCreate } = useSuspenseQuery(designsQuery).data;

@@ -11,11 +11,12 @@ import { DocumentForm } from '../features/design/document-form';
 import type { Draft } from '../features/design/document-path';
 import { FrozenNotice, RestoredNotice } from '../features/design/draft-notices';
 import { hintsOf } from '../features/design/hints';
-import { pathInWords } from '../features/design/labels';
+import { messageInWords, pathInWords } from '../features/design/labels';
 import { catalogueQuery, readRevision } from '../features/design/queries';
 import { SaveWords } from '../features/design/save-words';
 import { useDraft } from '../features/design/use-draft';
 import { designQuery, revisionPath } from '../features/designs/queries';
+import { envelopeLimits } from '../features/results/envelope-limits';
 import { EstimateCautions } from '../features/results/estimate-cautions';
 import { FreshnessWords, freshnessInAWord } from '../features/results/freshness-words';
 import { Headline, HeadlineBar, KeyResults } from '../features/results/headline';
@@ -28,7 +29,7 @@ import { revisionQuery } from '../features/revision/queries';
 import { RevisionHistory, RevisionRemarks, RevisionSignatures } from '../features/revision/revision-sidebar';
 import { RevisionWay } from '../features/revision/revision-way';
 import { AlignedStrip, drawDevice } from '../features/strip/aligned-strip';
-import { readStripDevice } from '../features/strip/device';
+import { readStripDevice, sizeOf } from '../features/strip/device';
 import { positionsOf } from '../features/strip/domain';
 import { queryClient } from '../lib/query-client';
 import { RequestError } from '../lib/request-error';
@@ -158,6 +159,7 @@ function RevisionScreen({ revision, letters, document, onChange, saved, beforeSe
   const previous = freshness !== 'current';
   const shownDocument = previous && estimate ? live.shownDesign : document;
   const device = useMemo(() => readStripDevice(document, live.shownDesign ?? undefined), [document, live.shownDesign]);
+  const say = (message: string) => messageInWords(document, message);
   const mayRemark = revision.availableEvents.includes('remark');
   const form = useMemo(
     () => ({
@@ -165,7 +167,10 @@ function RevisionScreen({ revision, letters, document, onChange, saved, beforeSe
       readOnly: onChange === undefined,
       catalogue: catalogue ?? [],
       hints: hintsOf(estimate),
-      issueAt: (path: string) => issueAt({ refused: live.refused }, document, path),
+      issueAt: (path: string) => {
+        const message = issueAt({ refused: live.refused }, document, path);
+        return message === undefined ? undefined : messageInWords(document, message);
+      },
       change: onChange ?? (() => undefined),
       shelf,
       onRemark: mayRemark ? setRemarkOn : undefined,
@@ -227,7 +232,7 @@ function RevisionScreen({ revision, letters, document, onChange, saved, beforeSe
         results={
           <div className="sheet p-3 @[720px]:p-4">
             <ResultTabs
-              {...{ estimate, previous }}
+              {...{ estimate, previous, say }}
               periodic={isTone(brief.document.vibration)}
               selected={tab}
               onSelect={setTab}
@@ -245,9 +250,12 @@ function RevisionScreen({ revision, letters, document, onChange, saved, beforeSe
                   {brief.number}
                 </Link>
               </h2>
-              <RequirementMargins {...{ requirements, estimate, previous }} />
+              <RequirementMargins
+                {...{ requirements, estimate, previous }}
+                others={envelopeLimits(brief.document, sizeOf(device), estimate)}
+              />
             </section>
-            {estimate ? <EstimateCautions estimate={estimate} /> : null}
+            {estimate ? <EstimateCautions {...{ estimate, say }} /> : null}
           </>
         }
         more={

@@ -43,3 +43,12 @@ export function pathInWords(document: unknown, path: string): string {
   const head = numbered && several ? `${group} ${Number(second) + 1}` : group;
   return name === '' || path === owner ? head : `${head}, ${name.charAt(0).toLowerCase()}${name.slice(1)}`;
 }
+
+/** A message of the server with the paths in it said in words: “coils.0” becomes “the coil”, “magnets.1” “magnet 2”. */
+export function messageInWords(document: unknown, message: string): string {
+  return message.replace(/\b(magnets|coils)\.(\d+)\b(?:\.\w+)*/g, (_, list: string, index: string) => {
+    const word = list === 'magnets' ? 'magnet' : 'coil';
+    const all = readAt(document, list);
+    return Array.isArray(all) && all.length > 1 ? `${word} ${Number(index) + 1}` : `the ${word}`;
+  });
+}

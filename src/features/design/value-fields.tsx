@@ -273,7 +273,12 @@ export function CatalogueAt({ path, label, kind, own, ownLabel, hint, children }
         <ReadOnlyLine path={path} label={label} hint={hint}>
           {name === '' ? <span className="text-graphite">none</span> : <span className="font-mono">{name}</span>}
         </ReadOnlyLine>
-        {stated ? <div className="ml-2 border-l border-rule pl-2.5">{children}</div> : null}
+        {stated ? (
+          <details className="ml-2 border-l border-rule pl-2.5">
+            <summary className="text-sm text-graphite hover:text-ink">its properties</summary>
+            {children}
+          </details>
+        ) : null}
       </>
     );
   const known = catalogue
@@ -293,7 +298,6 @@ export function CatalogueAt({ path, label, kind, own, ownLabel, hint, children }
     <div id={fieldAnchor(path)} className="flex scroll-mt-24 flex-col gap-1.5">
       <ComboBox
         layout="inline"
-        mono
         {...{ label, choices, hint }}
         value={stated ? ownKey : key}
         onChange={choose}

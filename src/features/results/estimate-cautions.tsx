@@ -10,13 +10,13 @@ export function pointOf(message: string): [string, string] {
 }
 
 /** What to know before relying on the figures or touching the device; the gravest first. */
-export function EstimateCautions({ estimate }: { estimate: Estimate }) {
+export function EstimateCautions({ estimate, say }: { estimate: Estimate; say: (message: string) => string }) {
   const cautions = [...estimate.cautions].sort((a, b) => order[a.severity] - order[b.severity]);
   if (cautions.length === 0) return null;
   return (
     <section aria-label="Cautions" className="flex flex-col gap-2.5">
       {cautions.map(({ code, severity, message, path }) => {
-        const [point, rest] = pointOf(message);
+        const [point, rest] = pointOf(say(message));
         return (
           <Caution key={`${code} ${path ?? ''}`} severity={severity} title={point === '' ? undefined : point}>
             {rest}

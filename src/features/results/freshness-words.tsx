@@ -3,6 +3,9 @@ import { Button } from '../../ui/button';
 import { Status } from '../../ui/status';
 import type { Freshness } from './live-estimate';
 
+/** Figures of an earlier state step back into the colour of secondary text; words beside them say why. */
+export const previousFigures = '[&_.font-mono]:text-graphite';
+
 interface FreshnessProps {
   freshness: Freshness;
   /** Whether any figures are on the page. */

@@ -2,6 +2,7 @@ import type { ReactNode } from 'react';
 import type { Estimate } from '#contracts/estimates';
 import { formatNumber, formatPercent } from '../../lib/format';
 import { classNames } from '../../ui/class-names';
+import { previousFigures } from './freshness-words';
 import { Caution } from '../../ui/caution';
 import { KeyFigures } from '../../ui/key-figures';
 import { Figure, LeadFigure, Quantity } from '../../ui/quantity';
@@ -23,7 +24,7 @@ export function Headline({ estimate, document, previous, state }: HeadlineProps)
   const absent = estimate?.response.loadPower === null;
   return (
     <div className="flex flex-col gap-1.5">
-      <div className={classNames('transition-opacity', previous && 'opacity-60')}>
+      <div className={classNames(previous && previousFigures)}>
         {estimate === null || absent ? (
           <p className="text-xl leading-tight text-graphite italic">
             {absent ? 'power not computed' : 'no figures yet'}
@@ -53,7 +54,7 @@ export function HeadlineBar({
       {estimate === null ? (
         <span className="text-graphite italic">no figures yet</span>
       ) : (
-        <span className={classNames(previous && 'opacity-60')}>
+        <span className={classNames(previous && previousFigures)}>
           <span className="font-mono text-lg font-bold">{number}</span>
           <span className="text-graphite">
             {' '}
@@ -71,7 +72,7 @@ export function KeyResults({ estimate, previous }: { estimate: Estimate; previou
   const { response, coil, bounds, power, mechanics } = estimate;
   return (
     <KeyFigures
-      className={classNames('transition-opacity', previous && 'opacity-60')}
+      className={classNames(previous && previousFigures)}
       figures={[
         { label: 'EMF, loaded', value: <Quantity value={response.emfRms} dimension="voltage" after="rms" /> },
         {

@@ -1,9 +1,11 @@
 import type { Estimate } from '#contracts/estimates';
 import { formatCount, formatNumber, formatPercent } from '../../lib/format';
+import { classNames } from '../../ui/class-names';
 import { KeyFigures } from '../../ui/key-figures';
 import { Figure, Quantity } from '../../ui/quantity';
 import { Status } from '../../ui/status';
 import { Tabs } from '../../ui/tabs';
+import { previousFigures } from './freshness-words';
 import { PowerFlow } from './power-flow';
 import { WaveformPlots } from './waveforms';
 
@@ -11,6 +13,8 @@ interface ResultTabsProps {
   estimate: Estimate | null;
   periodic: boolean;
   previous: boolean;
+  /** Puts paths of the document in a message into words. */
+  say: (message: string) => string;
   selected: string;
   onSelect: (tab: string) => void;
 }
@@ -27,7 +31,7 @@ function Response({ estimate: { response } }: { estimate: Estimate }) {
   const { branches } = response;
   const chosen = branches.findIndex(({ stable }) => stable === true);
   return (
-    <div className="grid gap-x-10 gap-y-4 @2xl:grid-cols-2">
+    <div className="grid gap-x-10 gap-y-4 @3xl:grid-cols-2">
       <KeyFigures
         ruled
         figures={[
@@ -111,7 +115,7 @@ function Parts({ estimate: { coil, mechanics, curve } }: { estimate: Estimate })
           figures={[
             { label: 'Resistance', value: <Quantity value={coil.resistance} dimension="resistance" /> },
             { label: 'Inductance', value: <Quantity value={coil.inductance} dimension="inductance" /> },
-            { label: 'Wire length', value: <Quantity value={coil.wireLength} dimension="length" /> },
+            { label: 'Wire length', value: <Quantity value={coil.wireLength} dimension="length" unit="m" /> },
             { label: 'Copper', value: <Quantity value={coil.copperMass} dimension="mass" /> },
             { label: 'Fill factor', value: share(coil.fillFactor) },
             {
@@ -130,7 +134,10 @@ function Parts({ estimate: { coil, mechanics, curve } }: { estimate: Estimate })
                 <>
                   <Quantity value={curve.couplingPeak} dimension="coupling" />
                   {curve.couplingPeakAt === null ? null : (
-                    <span className="text-graphite"> at {formatNumber(curve.couplingPeakAt * 1000)} mm</span>
+                    <span className="text-graphite">
+                      {' '}
+                      at {formatNumber(Number((curve.couplingPeakAt * 1000).toFixed(3)))} mm
+                    </span>
                   )}
                 </>
               ),
@@ -163,14 +170,14 @@ function Parts({ estimate: { coil, mechanics, curve } }: { estimate: Estimate })
   );
 }
 
-function Method({ estimate }: { estimate: Estimate }) {
+function Method({ estimate, say }: { estimate: Estimate; say: (message: string) => string }) {
   const { response, bounds, power, notes, engine, digest } = estimate;
   return (
     <div className="grid gap-x-10 gap-y-4 @2xl:grid-cols-2">
       <section className="flex flex-col gap-2">
         <h3>How it was computed</h3>
         <p>
-          {response.method}.{' '}
+          {response.method.charAt(0).toUpperCase() + response.method.slice(1)}.{' '}
           <Status tone={response.converged ? 'good' : 'bad'}>
             {response.converged ? 'converged' : 'did not converge'}
           </Status>
@@ -186,7 +193,7 @@ function Method({ estimate }: { estimate: Estimate }) {
           <ul className="list-disc pl-5">
             {notes.map((note) => (
               <li key={note} className="py-0.5">
-                {note}
+                {say(note)}
               </li>
             ))}
           </ul>
@@ -226,12 +233,10 @@ function Method({ estimate }: { estimate: Estimate }) {
 }
 
 /** Everything computed, a sheet for each question. */
-export function ResultTabs({ estimate, periodic, previous, selected, onSelect }: ResultTabsProps) {
+export function ResultTabs({ estimate, periodic, previous, say, selected, onSelect }: ResultTabsProps) {
   const none = <p className="text-graphite italic">No figures yet.</p>;
   const dimmed = (content: React.ReactNode) => (
-    <div className={previous ? '@container opacity-60 transition-opacity' : '@container transition-opacity'}>
-      {content}
-    </div>
+    <div className={classNames('@container', previous && previousFigures)}>{content}</div>
   );
   return (
     <Tabs
@@ -251,7 +256,7 @@ export function ResultTabs({ estimate, periodic, previous, selected, onSelect }:
           id: 'method',
           label: 'Method and notes',
           count: estimate ? estimate.notes.length : undefined,
-          content: estimate ? dimmed(<Method estimate={estimate} />) : none,
+          content: estimate ? dimmed(<Method estimate={estimate} say={say} />) : none,
         },
       ]}
     />

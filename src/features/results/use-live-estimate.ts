@@ -1,4 +1,5 @@
 import { useCallback, useEffect, useMemo, useReducer, useRef, useState } from 'react';
+import { readDesignDocument } from '#contracts/design-document';
 import { estimateRoutes } from '#contracts/estimates';
 import type { EstimateRequest } from '#contracts/estimates';
 import { callRoute } from '../../lib/fetch-json';
@@ -11,7 +12,8 @@ const pause = 100;
 
 /**
  * The estimate of a document as it is typed: asked for when typing pauses, the request before it given up, the last good answer
- * kept. `request` null asks for nothing.
+ * kept. A document that is faulty by its form alone is told so at once, without asking.
+ * @param request null asks for nothing.
  */
 export function useLiveEstimate(
   request: EstimateRequest | null,
@@ -32,6 +34,11 @@ export function useLiveEstimate(
       () => {
         asked.current = true;
         dispatch({ type: 'asked', request: wanted });
+        const reading = readDesignDocument(body.design);
+        if (!reading.ok) {
+          dispatch({ type: 'refused', request: wanted, design: body.design, issues: [...reading.issues] });
+          return;
+        }
         callRoute(estimateRoutes.estimate, { body, signal: gone.signal }).then(
           (estimate) => dispatch({ type: 'answered', request: wanted, design: body.design, estimate }),
           (error: unknown) => {

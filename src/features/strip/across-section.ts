@@ -1,4 +1,5 @@
 import { formatNumber } from '../../lib/format';
+import { formatTurns } from './drawing';
 import type { AcrossDevice, BlockMagnet, FlatCoil } from './device';
 import { hullOf, overlap } from './drawing';
 import type { CutWinding, Dimension, Drawing, MagnetBody, PlanView, Rect, Spring, Stop } from './drawing';
@@ -65,7 +66,7 @@ function planOf(device: AcrossDevice): PlanView {
 function dimensionsOf(device: AcrossDevice, extent: Rect): Dimension[] {
   const coils = device.coils.map((coil): Dimension => {
     const width = formatNumber(2 * coil.outer[0]);
-    const turns = coil.turns === null ? '' : ` · ${formatNumber(coil.turns, 6).replace(/\.0+$/, '')} turns`;
+    const turns = coil.turns === null ? '' : ` · ${formatTurns(coil.turns)} turns`;
     return {
       from: coil.at[0] - coil.outer[0],
       to: coil.at[0] + coil.outer[0],

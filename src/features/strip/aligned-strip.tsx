@@ -6,7 +6,7 @@ import { curveAt, curveOf, laneOf, laneText } from './curve';
 import { CurveLane, EmptyLane, laneY, PositionAxis } from './curve-lanes';
 import { describeStrip } from './describe';
 import type { StripDevice } from './device';
-import { domainOf } from './domain';
+import { domainOf, tightened } from './domain';
 import type { Domain } from './domain';
 import type { Drawing } from './drawing';
 import { motionOf } from './motion';
@@ -62,8 +62,13 @@ export function AlignedStrip({ device, estimate, previous = false, absent = 'not
   const play = usePlay(motion, estimate?.mechanics.naturalFrequency ?? null);
   const [held, setHeld] = useState<{ at: number; pinned: boolean } | null>(null);
 
-  const { drawing, domain } = useMemo(() => drawDevice(device, (travel ?? 0) * 1000), [device, travel]);
+  const drawn = useMemo(() => drawDevice(device, (travel ?? 0) * 1000), [device, travel]);
   const curve = useMemo(() => curveOf(estimate), [estimate]);
+  const { drawing } = drawn;
+  const domain = useMemo(
+    () => (curve && !previous ? tightened(drawn.domain, drawing, curve.position) : drawn.domain),
+    [drawn, drawing, curve, previous],
+  );
   const lanes = useMemo(
     () =>
       curve ? { flux: laneOf(curve.fluxLinkage, 'V·s', 'milli'), coupling: laneOf(curve.coupling, 'V·s/m') } : null,
@@ -240,11 +245,22 @@ export function AlignedStrip({ device, estimate, previous = false, absent = 'not
                 <Plan plan={drawing.plan} layout={layout} planY={layout.planY} at={position} />
               ) : null}
             </g>
-            <g opacity={previous ? 0.45 : 1}>
+            <g>
               {curve && lanes ? (
                 <>
-                  <CurveLane title="flux linkage" lane={lanes.flux} index={0} {...{ curve, domain, layout }} />
-                  <CurveLane title="coupling" lane={lanes.coupling} index={1} copper {...{ curve, domain, layout }} />
+                  <CurveLane
+                    title="flux linkage"
+                    lane={lanes.flux}
+                    index={0}
+                    {...{ curve, domain, layout, previous }}
+                  />
+                  <CurveLane
+                    title="coupling"
+                    lane={lanes.coupling}
+                    index={1}
+                    copper
+                    {...{ curve, domain, layout, previous }}
+                  />
                 </>
               ) : (
                 <>

@@ -25,6 +25,8 @@ interface LaneProps {
   layout: StripLayout;
   index: number;
   copper?: boolean;
+  /** Of an earlier state of the document: dashed. */
+  previous?: boolean;
 }
 
 /** One curve over the position axis, with its own scale at the left and its name in the corner where it is out of the way. */
@@ -36,6 +38,7 @@ export const CurveLane = memo(function CurveLane({
   layout,
   index,
   copper = false,
+  previous = false,
 }: LaneProps) {
   const box = layout.lanes[index];
   if (!box) return null;
@@ -77,6 +80,7 @@ export const CurveLane = memo(function CurveLane({
         className={copper ? 'stroke-copper' : 'stroke-ink'}
         strokeWidth={1.7}
         strokeLinejoin="round"
+        strokeDasharray={previous ? '6 4' : undefined}
       />
       <text x={layout.right} y={box.top - 6} textAnchor="end" fontSize={11} className="fill-ink">
         <tspan fontWeight={650} className={copper ? 'fill-copper' : undefined}>

@@ -1,6 +1,7 @@
 import type { Estimate } from '#contracts/estimates';
 import { formatCount, formatNumber } from '../../lib/format';
 import type { StripDevice } from './device';
+import { formatTurns } from './drawing';
 
 const mm = (value: number) => `${formatNumber(value)} mm`;
 
@@ -17,8 +18,7 @@ function magnetWords(device: StripDevice): string[] {
 }
 
 function coilWords(device: StripDevice): string[] {
-  const turns = (count: number | null) =>
-    count === null ? '' : ` of ${formatNumber(count, 6).replace(/\.0+$/, '')} turns`;
+  const turns = (count: number | null) => (count === null ? '' : ` of ${formatTurns(count)} turns`);
   if (device.layout === 'across')
     return device.coils.map(
       (coil) =>

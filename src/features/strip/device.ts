@@ -128,6 +128,14 @@ class Reader {
     return value === null ? null : value * 1000;
   }
 
+  /** A size: what is not above zero is drawn as it was before, like a text that cannot be read. */
+  size(path: Key[]): number | null {
+    const now = this.mm(path);
+    if (now === null || now > 0) return now;
+    const before = numberFrom(valueAt(this.earlier, path), 'length');
+    return before !== null && before > 0 ? before * 1000 : now;
+  }
+
   mmOr(path: Key[], fallback: number): number {
     const value = this.optional(path, 'length');
     return value === null ? fallback : value * 1000;
@@ -156,9 +164,9 @@ class Reader {
 const drawable = (...sizes: (number | null)[]): boolean => sizes.every((size) => size !== null && size > 0);
 
 function cylinder(reader: Reader, path: Key[]): CylinderMagnet | null {
-  const outer = reader.mm([...path, 'outerDiameter']);
+  const outer = reader.size([...path, 'outerDiameter']);
   const inner = reader.mmOr([...path, 'innerDiameter'], 0);
-  const length = reader.mm([...path, 'length']);
+  const length = reader.size([...path, 'length']);
   const at = reader.mmOr([...path, 'at'], 0);
   if (outer === null || length === null || !drawable(outer, length)) return null;
   return {
@@ -188,9 +196,9 @@ function winding(reader: Reader, path: Key[]): Winding {
 }
 
 function throughCoil(reader: Reader, path: Key[]): ThroughCoil | null {
-  const inner = reader.mm([...path, 'innerDiameter']);
-  const outer = reader.mm([...path, 'outerDiameter']);
-  const length = reader.mm([...path, 'length']);
+  const inner = reader.size([...path, 'innerDiameter']);
+  const outer = reader.size([...path, 'outerDiameter']);
+  const length = reader.size([...path, 'length']);
   const at = reader.mm([...path, 'at']);
   if (inner === null || outer === null || length === null || at === null || !drawable(outer, length)) return null;
   return { ...winding(reader, path), innerRadius: inner / 2, outerRadius: outer / 2, length, at };
@@ -198,7 +206,7 @@ function throughCoil(reader: Reader, path: Key[]): ThroughCoil | null {
 
 function flatCoil(reader: Reader, path: Key[]): FlatCoil | null {
   const shape = reader.raw(...path, 'shape');
-  const length = reader.mm([...path, 'length']);
+  const length = reader.size([...path, 'length']);
   const at = reader.triple([...path, 'at']);
   let inner: [number, number] | null = null;
   let outer: [number, number] | null = null;
@@ -209,15 +217,15 @@ function flatCoil(reader: Reader, path: Key[]): FlatCoil | null {
     outer = outer && [outer[0] / 2, outer[1] / 2];
   } else if (shape === 'racetrack') {
     const straight = reader.mm([...path, 'straight']);
-    const small = reader.mm([...path, 'innerEndRadius']);
-    const large = reader.mm([...path, 'outerEndRadius']);
+    const small = reader.size([...path, 'innerEndRadius']);
+    const large = reader.size([...path, 'outerEndRadius']);
     if (straight !== null && small !== null && large !== null) {
       inner = [small, small + straight / 2];
       outer = [large, large + straight / 2];
     }
   } else {
-    const small = reader.mm([...path, 'innerDiameter']);
-    const large = reader.mm([...path, 'outerDiameter']);
+    const small = reader.size([...path, 'innerDiameter']);
+    const large = reader.size([...path, 'outerDiameter']);
     if (small !== null && large !== null) {
       inner = [small / 2, small / 2];
       outer = [large / 2, large / 2];
@@ -284,4 +292,30 @@ export function readStripDevice(document: unknown, earlier?: unknown): StripDevi
     offset: reader.mmOr(['misalignment', 'offset'], 0),
     tilt: reader.optional(['misalignment', 'tilt'], 'angle', 0) ?? 0,
   };
+}
+
+/** Outer sizes of magnets and windings at rest, m; null where nothing can be drawn. */
+export function sizeOf(device: StripDevice): { across: number | null; along: number | null } {
+  const parts: { from: number; to: number; across: number }[] =
+    device.layout === 'through'
+      ? [...device.magnets, ...device.fixed, ...device.coils].map(({ at, length, outerRadius }) => ({
+          from: at - length / 2,
+          to: at + length / 2,
+          across: 2 * outerRadius,
+        }))
+      : [
+          ...device.magnets.map(({ at, size }) => ({
+            from: at[0] - size[0] / 2,
+            to: at[0] + size[0] / 2,
+            across: Math.max(size[1], size[2]),
+          })),
+          ...device.coils.map(({ at, outer }) => ({
+            from: at[0] - outer[0],
+            to: at[0] + outer[0],
+            across: 2 * outer[1],
+          })),
+        ];
+  if (parts.length === 0) return { across: null, along: null };
+  const along = Math.max(...parts.map(({ to }) => to)) - Math.min(...parts.map(({ from }) => from));
+  return { across: Math.max(...parts.map(({ across }) => across)) / 1000, along: along / 1000 };
 }

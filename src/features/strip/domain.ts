@@ -59,6 +59,11 @@ export function domainOf(device: StripDevice, drawing: Drawing): Domain {
   const meets = meetings(device);
   let from = Math.min(extent.x0, ...meets.map(([start]) => start));
   let to = Math.max(extent.x1, ...meets.map(([, end]) => end));
+  // The device stays near the middle of the picture, even where the curves reach further to one side.
+  const middle = (extent.x0 + extent.x1) / 2;
+  const reach = 0.75 * Math.max(middle - from, to - middle);
+  from = Math.min(from, middle - reach);
+  to = Math.max(to, middle + reach);
   const pad = 0.03 * (to - from);
   from -= pad;
   to += pad;
@@ -69,6 +74,13 @@ export function domainOf(device: StripDevice, drawing: Drawing): Domain {
   }
   const step = niceStep((to - from) / 40);
   return { from: Math.floor(from / step + 1e-9) * step, to: Math.ceil(to / step - 1e-9) * step };
+}
+
+/** The stretch without what neither the drawing nor a curve that was computed over less of it would fill. */
+export function tightened({ from, to }: Domain, { extent }: Drawing, position: readonly number[]): Domain {
+  const [first = from, last = to] = [position[0], position[position.length - 1]];
+  const pad = 0.02 * (to - from);
+  return { from: Math.max(from, Math.min(first, extent.x0 - pad)), to: Math.min(to, Math.max(last, extent.x1 + pad)) };
 }
 
 /** Positions at which the estimate is asked for its curve, in metres and rising. */

@@ -1,3 +1,5 @@
+import { formatNumber } from '../../lib/format';
+
 /** Primitives of the section drawing. Millimetres, x along the travel, y upwards; what moves is placed for x = 0. */
 
 export interface Rect {
@@ -133,3 +135,10 @@ export function zigzag(from: number, to: number, y: number, amplitude: number, t
   points.push([to - lead, y], [to, y]);
   return points;
 }
+
+/** A count of turns: whole numbers as they are, parted in thousands from 10 000 on. */
+export const formatTurns = (turns: number): string => {
+  if (!Number.isInteger(turns) || turns > 1e7) return formatNumber(turns);
+  const whole = String(turns);
+  return whole.length > 4 ? whole.replace(/\B(?=(\d{3})+$)/g, '\u2009') : whole;
+};

@@ -1,4 +1,5 @@
 import { formatNumber } from '../../lib/format';
+import { formatTurns } from './drawing';
 import type { CylinderMagnet, ThroughCoil, ThroughDevice } from './device';
 import { hullOf, mirrored, overlap } from './drawing';
 import type { Arrow, CutWinding, Dimension, Drawing, MagnetBody, Pole, Rect, Spring, Stop } from './drawing';
@@ -127,7 +128,7 @@ function dimensionsOf(device: ThroughDevice): Dimension[] {
       to: coil.at + coil.length / 2,
       y: Math.max(coil.outerRadius, coil.innerRadius),
       side: 'above',
-      text: coil.turns === null ? length : `${length} · ${formatNumber(coil.turns, 6).replace(/\.0+$/, '')} turns`,
+      text: coil.turns === null ? length : `${length} · ${formatTurns(coil.turns)} turns`,
       shortText: length,
       moves: false,
     };
