@@ -73,8 +73,8 @@ describe('signing in', () => {
     }
     const ratio = Math.min(...times.unknown) / Math.min(...times.known);
     // Without the stand-in hash an unknown address answers in about a tenth of the time.
-    expect(ratio).toBeGreaterThan(0.5);
-    expect(ratio).toBeLessThan(2);
+    expect(ratio).toBeGreaterThan(0.4);
+    expect(ratio).toBeLessThan(2.5);
   });
 
   test('takes a new session id, and a cookie that scripts and other sites cannot use', async () => {

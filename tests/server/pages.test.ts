@@ -35,12 +35,19 @@ describe('pages', () => {
     expect(headers['cache-control']).toBe('public, max-age=31536000, immutable');
   });
 
-  test.each(['/assets/old-9z9z9z.js', '/assets/', '/assets/../../package.json', '/assets/%2e%2e/index.html.bak'])(
+  test.each(['/assets/old-9z9z9z.js', '/assets/', '/assets/index.html', '/assets/..%2findex.html'])(
     'an unknown file %s is 404 and not the page',
     async (path) => {
       const { status, text } = await get(path);
-      expect(status).toBe(404);
-      expect(text).not.toContain('"dependencies"');
+      expect([status, text]).toEqual([404, 'There is nothing here.\n']);
+    },
+  );
+
+  test.each(['/assets/..%2f..%2fserver.ts', '/..%2fserver.ts', '/%2e%2e/server.ts', '/../server.ts'])(
+    'nothing outside the built client is to be had by %s',
+    async (path) => {
+      const { status, text } = await get(path);
+      expect([status, text.includes('startTestServer')]).toEqual([404, false]);
     },
   );
 
