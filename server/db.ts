@@ -19,6 +19,8 @@ export const knexSettings = (file: string): Knex.Config => ({
         connection.pragma('journal_mode = WAL');
         connection.pragma('synchronous = FULL');
         connection.pragma('foreign_keys = ON');
+        // Else REPLACE would remove a row without asking the triggers that forbid it.
+        connection.pragma('recursive_triggers = ON');
         connection.pragma('busy_timeout = 5000');
         done(null);
       } catch (error) {

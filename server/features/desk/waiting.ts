@@ -51,7 +51,7 @@ export async function onTheWay(db: Knex, actorId: string): Promise<Standing[]> {
 }
 
 const item = (row: Standing, what: string): DeskItem => ({
-  href: row.run_id === null ? `/designs/${row.design_id}/${row.letter}` : `/runs/${row.run_id}`,
+  href: row.run_id === null ? `/designs/${row.design_id}/${row.letter}` : `/bench/runs/${row.run_id}`,
   title: `${row.number} ${row.letter} · ${row.title}`,
   what,
   since: row.state_since,
