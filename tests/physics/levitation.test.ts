@@ -223,6 +223,16 @@ describe('bracketed root', () => {
     expect(bracketedRoot((x) => x * x - 2, 0, 2, 1e-14)).toBeCloseTo(Math.SQRT2, 13);
     expect(bracketedRoot((x) => Math.atan(1e6 * (x - 0.3)), -5, 9, 1e-12)).toBeCloseTo(0.3, 11);
     expect(bracketedRoot((x) => x ** 9, -1, 1.3, 1e-9)).toBeCloseTo(0, 8);
+    // one end of the bracket would stay for ever without its value being halved
+    for (const turn of [1, -1]) {
+      let calls = 0;
+      const bent = (x: number): number => {
+        calls += 1;
+        return turn * (1 - 1 / (turn * x));
+      };
+      bracketedRoot(bent, turn * 0.01, turn * 100, 1e-12);
+      expect(calls).toBeLessThan(36);
+    }
     expect(() => bracketedRoot((x) => x * x + 1, -1, 1, 1e-9)).toThrow(/change sign/);
   });
 });

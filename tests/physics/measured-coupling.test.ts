@@ -20,6 +20,7 @@ describe('measured coupling', () => {
       expect((table.fluxAt(x + h) - table.fluxAt(x - h)) / (2 * h)).toBeCloseTo(table.at(x), 7);
       expect((table.at(x + h) - table.at(x - h)) / (2 * h)).toBeCloseTo(table.slopeAt(x), 2);
     }
+    for (const x of position) expect(table.fluxAt(x + 1e-12)).toBeCloseTo(table.fluxAt(x - 1e-12), 10);
     expect(table.at(-1)).toBe(-1);
     expect(table.at(1)).toBe(4.5);
   });

@@ -132,6 +132,21 @@ describe('misaligned assembly', () => {
     halves.forEach((value, k) => expect(value / whole[k]!).toBeCloseTo(1, 8));
   });
 
+  it('tilts about the assembly’s own middle, wherever that stands for x = 0', () => {
+    const misalignment = { offset: 2e-4, tilt: 3 * degrees };
+    const magnets = [
+      { ...magnet, length: 4e-3, at: -3e-3 },
+      { ...magnet, length: 5e-3, at: 3e-3, magnetisation: -1e6 },
+    ];
+    const here = linkageAt(misalignment, 2e-3, magnets);
+    const there = linkageAt(
+      misalignment,
+      -5e-3,
+      magnets.map((one) => ({ ...one, at: one.at + 7e-3 })),
+    );
+    there.forEach((value, k) => expect(value / here[k]!).toBeCloseTo(1, 9));
+  });
+
   it('coupling, slope and curvature are the derivatives of the flux linkage', () => {
     const misalignment = { offset: 4e-4, tilt: 2 * degrees };
     const h = 1e-6;

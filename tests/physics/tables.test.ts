@@ -96,6 +96,12 @@ describe('monotone cubic (PCHIP)', () => {
     expect(monotoneCubicSlopeAt(curve, 9)).toBe(0);
   });
 
+  it('limits the end slope where the data turn behind it, and sets it to zero where it would point the wrong way', () => {
+    // three-point slope 2.7, limited to three times the first secant of 0.1
+    expect(monotoneCubicSlopeAt(monotoneCubic([0, 1, 2, 3], [0, 0.1, -5, -6]), 0)).toBeCloseTo(0.3, 14);
+    expect(monotoneCubicSlopeAt(monotoneCubic([0, 1, 2, 3], [0, 0.1, 5, 6]), 0)).toBe(0);
+  });
+
   it('is a straight line through two points', () => {
     const line = monotoneCubic([1, 3], [2, -2]);
     expect(monotoneCubicAt(line, 1.5)).toBeCloseTo(1, 14);

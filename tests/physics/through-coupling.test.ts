@@ -2,8 +2,9 @@ import { describe, expect, it } from 'vitest';
 import { gaussLegendre } from '../../server/physics/kernels/gauss-legendre';
 import { addCoaxialCircles, mutualOfCircles } from '../../server/physics/models/coaxial-circles';
 import { MAGNETIC_CONSTANT } from '../../server/physics/models/constants';
-import { couplingOfDevice, couplingTable } from '../../server/physics/models/coupling';
+import { couplingOfDevice, couplingTable, linkageOfDesign } from '../../server/physics/models/coupling';
 import type { MagneticDesign } from '../../server/physics/models/coupling';
+import { edgeProfile } from '../../server/physics/models/edge-profile';
 import { axialLinkage } from '../../server/physics/models/through-coupling';
 import type { AxialMagnet } from '../../server/physics/models/axial-magnet';
 import type { AxialCoil } from '../../server/physics/models/through-coupling';
@@ -225,6 +226,39 @@ describe('through layout', () => {
     const ring = linkageAt([{ ...magnet, innerRadius: 2e-3 }], [coil], 4e-3);
     const difference = linkageAt([magnet, { ...bore, magnetisation: -bore.magnetisation }], [coil], 4e-3);
     ring.forEach((value, k) => expect(value).toBeCloseTo(difference[k]!, 12));
+  });
+});
+
+describe('tabulated linkage', () => {
+  it.each(aligned)('is the exact one of case %s to 1e-9 of the peak, far out too', (id) => {
+    const design = referenceCase(id).design as unknown as MagneticDesign;
+    const exact = linkageOfDesign(design);
+    const quick = exact.tabulated();
+    const rows: [number[], number[]][] = [0, 1, 2, 3].map(() => [[], []]);
+    const out = new Float64Array(4);
+    for (let x = -0.06; x < 0.08; x += 0.137e-3) {
+      exact.at(x, out);
+      out.forEach((value, k) => rows[k]![0].push(value));
+      expect(exact.couplingAt(x)).toBeCloseTo(out[1]!, 10);
+      quick.at(x, out);
+      out.forEach((value, k) => rows[k]![1].push(value));
+      expect(quick.couplingAt(x)).toBeCloseTo(out[1]!, 12);
+    }
+    [2e-9, 2e-9, 1e-7, 1e-5].forEach((tolerance, k) => {
+      expect(errorToPeak(rows[k]![0], rows[k]![1])).toBeLessThan(tolerance);
+    });
+  });
+
+  it('does not depend on what was asked before, and evaluates exactly where no table can be', () => {
+    const one = axialLinkage([magnet], [coil]).tabulated();
+    const other = axialLinkage([magnet], [coil]).tabulated();
+    one.couplingAt(1);
+    one.couplingAt(-3e-3);
+    expect(one.couplingAt(2.7e-3)).toBe(other.couplingAt(2.7e-3));
+    const pancake = { ...coil, innerRadius: 1e-3, at: 12e-3 };
+    const mixed = axialLinkage([magnet], [pancake, coil]);
+    expect(mixed.tabulated().couplingAt(1e-3) / mixed.couplingAt(1e-3)).toBeCloseTo(1, 8);
+    expect(() => edgeProfile(5e-3, Float64Array.of(6e-3), Float64Array.of(1), 0, 1)).toThrow(/gap must be positive/);
   });
 });
 

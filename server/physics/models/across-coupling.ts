@@ -67,7 +67,14 @@ function turnClearance(w: number, outer: number): number {
 export function acrossLinkage(magnets: readonly FlatMagnet[], coils: readonly CoilShape[]): Linkage {
   const groups = coils.flatMap((coil, i) => groupsOf(magnets, coil, i));
   const terms = new Float64Array(EDGE_TERMS);
-  return {
+  const single = new Float64Array(EDGE_TERMS);
+  const linkage: Linkage = {
+    couplingAt: (x) => {
+      linkage.at(x, single);
+      return single[1]!;
+    },
+    // the edge functions are tables already
+    tabulated: () => linkage,
     at: (x, out) => {
       out.fill(0);
       for (const { table, shift, weight } of groups) {
@@ -80,6 +87,7 @@ export function acrossLinkage(magnets: readonly FlatMagnet[], coils: readonly Co
     },
     passages: passagesOf(magnets, coils),
   };
+  return linkage;
 }
 
 function groupsOf(magnets: readonly FlatMagnet[], coil: CoilShape, index: number): EdgeGroup[] {

@@ -90,10 +90,8 @@ export function addCoaxialCircles(out: Float64Array, weight: number, a: number, 
 }
 
 /**
- * Adds weight × F of two coaxial circles to `out[0]` and weight × M to `out[1]`: what the coupling and its slope need,
- * without the rest.
+ * Adds weight × F of two coaxial circles to `out[0]`: all that the coupling alone needs.
  *
- * @param out at least two numbers
  * @param a radius of one circle, positive (m)
  * @param r radius of the other, positive (m)
  * @param z axial distance, signed (m)
@@ -104,37 +102,38 @@ export function addCoaxialFlux(out: Float64Array, weight: number, a: number, r: 
   const difference = Math.abs(a - r);
   const pp = sum * sum + zz;
   const P = Math.sqrt(pp);
-  const m = (4 * a * r) / pp;
-  const kcSquared = (difference * difference + zz) / pp;
-  if (kcSquared < 1e-300) return;
-  const kc = Math.sqrt(kcSquared);
+  const kc = Math.sqrt((difference * difference + zz) / pp);
+  if (kc < 1e-150) return;
+  // F = 2 μ0 a r (z/P) (1/n) [∫ sin²ψ/Δ − p² ∫ sin²ψ/((1 − n sin²ψ) Δ)], both by one mean: sums of c_n² and of Q_n
   const p0 = Math.max(difference / sum, LEAST_RATIO);
   const pp0 = p0 * p0;
   let mean = 0.5 * (1 + kc);
   let g = Math.sqrt(kc);
-  let c = (0.5 * m) / (1 + kc);
-  let sum1 = c * c;
-  let q = (0.5 * (pp0 - kc)) / (pp0 + kc);
-  let p = (0.5 * (pp0 + kc)) / p0;
+  let c = 0.5 * (1 - kc);
+  let down = pp0 + kc;
+  let q = (0.5 * (pp0 - kc)) / down;
+  let p = (0.5 * down) / p0;
+  let sumC = c * c;
   let sumQ = 0;
   let power = 1;
   while (c > MEAN_SETTLED * mean) {
     const ag = mean * g;
     const square = p * p;
     sumQ += q;
-    q *= (0.5 * (square - ag)) / (square + ag);
-    p = (0.5 * (square + ag)) / p;
-    const next = 0.5 * (mean + g);
-    c = (0.25 * c * c) / next;
+    // one division for both Q and p
+    down = square + ag;
+    const inverse = 0.5 / (down * p);
+    q *= (square - ag) * inverse * p;
+    p = down * down * inverse;
+    c = 0.5 * (mean - g);
+    mean -= c;
     g = Math.sqrt(ag);
-    mean = next;
     power *= 2;
-    sum1 += power * c * c;
+    sumC += power * c * c;
   }
   sumQ += (q * 2 * p) / (mean + p);
-  const scale = (weight * MAGNETIC_CONSTANT * Math.PI) / (2 * mean);
-  out[0]! += ((scale * 2 * a * r * z) / P) * (sum1 / m - 0.5 * sumQ);
-  out[1]! += scale * P * sum1;
+  const m = (4 * a * r) / pp;
+  out[0]! += ((weight * MAGNETIC_CONSTANT * Math.PI * a * r * z) / (mean * P)) * (sumC / m - 0.5 * sumQ);
 }
 
 /**

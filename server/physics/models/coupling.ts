@@ -43,6 +43,9 @@ export interface MagneticDesign {
 /** Error of the table relative to the largest coupling. */
 const TABLE_TOLERANCE = 1e-9;
 
+/** Number of positions from which tables of the linkage pay. */
+const TABULATED_FROM = 40;
+
 /**
  * The linkage of a design: every magnet with every coil, temperature and recoil included.
  *
@@ -82,13 +85,15 @@ function axialCoilsOf(design: MagneticDesign): AxialCoil[] {
 }
 
 /**
- * Flux linkage and coupling of a design at given positions, evaluated exactly at each.
+ * Flux linkage and coupling of a design at given positions, evaluated exactly at each;
+ * many of them through the linkage's tables, within 1e-9 of the largest value.
  *
  * @param positions of the moving assembly (m)
  * @returns two fresh arrays as long as `positions`
  */
 export function couplingOfDevice(design: MagneticDesign, positions: Float64Array): CouplingCurve {
-  const linkage = linkageOfDesign(design);
+  const exact = linkageOfDesign(design);
+  const linkage = positions.length > TABULATED_FROM ? exact.tabulated() : exact;
   const out = new Float64Array(LINKAGE_TERMS);
   const fluxLinkage = new Float64Array(positions.length);
   const coupling = new Float64Array(positions.length);
@@ -114,7 +119,8 @@ export function couplingTable(design: MagneticDesign, from: number, to: number):
 
 /** Tabulates a linkage; see `couplingTable`. */
 export function tableOfLinkage(linkage: Linkage, from: number, to: number): CouplingTable {
-  const table = hermiteTable((x, out) => linkage.at(x, out), from, to, {
+  const quick = linkage.tabulated();
+  const table = hermiteTable((x, out) => quick.at(x, out), from, to, {
     tolerance: TABLE_TOLERANCE,
     breaks: linkage.passages,
   });

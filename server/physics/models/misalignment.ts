@@ -79,7 +79,13 @@ export function misalignedLinkage(
   }
   const radii = [...rules.values()];
   const scratch = new Float64Array(COMPLEX_CIRCLE_TERMS);
-  return {
+  const single = new Float64Array(COMPLEX_CIRCLE_TERMS);
+  const linkage: Linkage = {
+    couplingAt: (x) => {
+      linkage.at(x, single);
+      return single[1]!;
+    },
+    tabulated: () => linkage,
     at: (x, out) => {
       scratch.fill(0);
       for (const term of terms) {
@@ -101,6 +107,7 @@ export function misalignedLinkage(
     },
     passages: passagesOf(magnets, coils, tilt, middle),
   };
+  return linkage;
 }
 
 interface EdgeContext {
