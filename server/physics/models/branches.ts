@@ -63,9 +63,14 @@ export function everyOrbit(
   equilibria: readonly number[],
 ): SteadyOrbit[] {
   const found: Float64Array[] = [];
-  const keep = (start: Float64Array): void => {
+  /** Orbits that a curve in frequency has passed: the same curve need not be followed again from them. */
+  const passed = new Set<Float64Array>();
+  const keep = (start: Float64Array): Float64Array | null => {
     const orbit = orbitWith(oscillator, TRACED, omega, drive, start);
-    if (orbit && isNew(orbit, found)) found.push(orbit);
+    if (!orbit) return null;
+    const known = sameAs(orbit, found);
+    if (!known) found.push(orbit);
+    return known ?? orbit;
   };
   const force = Math.hypot(...drive);
   const reach = force / (oscillator.damping * omega + 0.05 * oscillator.mass * omega * omega);
@@ -102,7 +107,12 @@ export function everyOrbit(
     for (const start of describedStarts(oscillator, omega, drive, [low - margin, high + margin])) keep(start);
   }
   if (found.length === 0) keep(linearStart(oscillator, omega, drive, 0));
-  for (const orbit of [...found]) {
+  for (const orbit of found) {
+    if (passed.has(orbit)) continue;
+    const pass = (start: Float64Array): void => {
+      const at = keep(start);
+      if (at) passed.add(at);
+    };
     let atOmega = omega;
     const system = {
       size: balance.size,
@@ -124,8 +134,8 @@ export function everyOrbit(
       most: 250,
     };
     const within = (rate: number): boolean => rate > 0.4 * omega && rate < 2.5 * omega;
-    collect(system, start, omega, omega, { ...options, direction: 1 }, within, keep);
-    collect(system, start, omega, omega, { ...options, direction: -1 }, within, keep);
+    collect(system, start, omega, omega, { ...options, direction: 1 }, within, pass);
+    collect(system, start, omega, omega, { ...options, direction: -1 }, within, pass);
   }
   const random = uniformRandom(1);
   const largest = Math.max(reach, ...found.map(spread));
@@ -141,14 +151,8 @@ export function everyOrbit(
   const refined: SteadyOrbit[] = [];
   for (const start of found) {
     const orbit = findOrbit(oscillator, omega, drive, start);
-    if (
-      !orbit.converged ||
-      !isNew(
-        orbit.displacement,
-        refined.map((other) => other.displacement),
-      )
-    )
-      continue;
+    const others = refined.map((other) => other.displacement);
+    if (!orbit.converged || sameAs(orbit.displacement, others)) continue;
     refined.push({ ...orbit, stable: largestMultiplier(oscillator, orbit.displacement, omega) < 1 });
   }
   return refined.sort((a, b) => peak(a.displacement) - peak(b.displacement));
@@ -165,7 +169,7 @@ function collect(
   target: number,
   options: Options,
   within: (parameter: number) => boolean,
-  keep: (x: Float64Array) => void,
+  keep: (x: Float64Array) => unknown,
 ): void {
   let before: Float64Array | null = null;
   let from = parameter;
@@ -212,9 +216,10 @@ function peak(coefficients: Float64Array): number {
   return largest;
 }
 
-function isNew(orbit: Float64Array, others: Float64Array[]): boolean {
+/** The one among the others that is the same orbit to 1e-6 of the largest. */
+function sameAs(orbit: Float64Array, others: Float64Array[]): Float64Array | undefined {
   const size = Math.max(spread(orbit), ...others.map(spread));
-  return !others.some((other) => gap(orbit, other) < 1e-6 * size);
+  return others.find((other) => gap(orbit, other) < 1e-6 * size);
 }
 
 function gap(a: Float64Array, b: Float64Array): number {

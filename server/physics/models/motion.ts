@@ -26,6 +26,8 @@ export interface MotionOptions {
   tolerance: number;
   /** A time of the device's own, s; scales the first step and the smallest. */
   period: number;
+  /** Steps after which the run is given up. */
+  most: number;
   /** Displacement that counts as small before anything has moved, m; velocity is this over period/2π. */
   smallest: number;
 }
@@ -99,6 +101,8 @@ export class Motion {
   /** Sets the state at time t with sums, peaks and contacts cleared. */
   place(t: number, u: number, v: number, current: number, voltage: ArrayLike<number>): void {
     this.t = t;
+    this.steps = 0;
+    this.rejected = 0;
     this.u = u;
     this.v = v;
     this.voltage.set(voltage);
@@ -168,7 +172,7 @@ export class Motion {
     this.carry();
   }
 
-  /** Goes on to a time with error control; returns false where the motion runs away. */
+  /** Goes on to a time with error control; returns false where the motion runs away or takes too long. */
   advance(to: number, longest: number): boolean {
     const least = 1e-11 * this.options.period;
     while (to - this.t > least) {
@@ -181,6 +185,7 @@ export class Motion {
         this.lastStep = h * (Number.isFinite(error) ? Math.max(0.2, 0.9 / Math.sqrt(Math.sqrt(error))) : 0.1);
         continue;
       }
+      if (this.steps + this.rejected > this.options.most) return false;
       if (!Number.isFinite(error) || Math.abs(this.trialU) > ESCAPED * this.options.smallest) return false;
       const growth = error > 0 ? Math.min(3, 0.9 / Math.sqrt(Math.sqrt(error))) : 3;
       // a step cut short by the end of the stretch says nothing against a longer one

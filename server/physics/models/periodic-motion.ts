@@ -96,6 +96,7 @@ export function shoot(
   const motion = new Motion(device, circuit, accelerationAt, {
     tolerance,
     period: (2 * Math.PI) / omega,
+    most: 20 * points,
     smallest: 0.5 * size,
   });
   const scale = Float64Array.from({ length: n }, (_, k) => (k === 0 ? size : k === 1 ? omega * size : 1));

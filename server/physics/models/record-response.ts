@@ -1,18 +1,21 @@
 import type { Device, DeviceResponse, Tone } from './device';
 import { runLinearRecord } from './recording-linear';
-import { recordedExcitation, runRecord } from './record-run';
+import { MOST_STEPS, recordedExcitation, runRecord } from './record-run';
 import type { Excitation, RecordRun } from './record-run';
 import { hasConstantCoupling, isMechanicallyLinear } from './oscillator';
+import { notComputed } from './not-computed';
 import { modelNote } from './shooting-response';
 import { rangeNotes } from './tone-response';
 
 /** Error of a step relative to the motion. */
 const TOLERANCE = 1e-7;
-/** Samples past which a record is not stepped through. */
-const MOST_SAMPLES = 4_000_000;
+/** Steps that a period of the device's own, or of a tone, is likely to take. */
+export const STEPS_PER_PERIOD = 60;
 
 /** Steps a device through a recording from rest. */
 export function respondToRecordByStepping(device: Device, acceleration: Float64Array, rate: number): DeviceResponse {
+  const tooLong = whyTooLong(device, (acceleration.length - 1) / rate, rate);
+  if (tooLong) return notComputed(tooLong);
   const excitation = recordedExcitation(acceleration, rate);
   const constant = hasConstantCoupling(device);
   if (isMechanicallyLinear(device) && constant) {
@@ -35,10 +38,16 @@ export function respondToRecordByStepping(device: Device, acceleration: Float64A
   return respondByStepping(device, excitation, { rms: Math.sqrt(run.mean.emf2), peak: run.emfPeak });
 }
 
-/** Whether a record is too long to be stepped through. */
-export function isTooLong(samples: number): string | null {
-  return samples > MOST_SAMPLES
-    ? `Not computed, because the record has ${samples} samples and at most ${MOST_SAMPLES} are stepped through.`
+/**
+ * Why a time is too long to be stepped through, or null where it is not.
+ *
+ * @param duration s; @param fastest of what excites, Hz: the rate of a record, the frequency of a tone.
+ */
+export function whyTooLong(device: Device, duration: number, fastest: number): string | null {
+  const own = Math.sqrt(Math.abs(device.suspension.forceSlope(0)) / device.mass) / (2 * Math.PI);
+  const steps = duration * Math.max(fastest, STEPS_PER_PERIOD * own);
+  return steps > MOST_STEPS
+    ? `Not computed, because stepping through ${duration.toPrecision(4)} s would take some ${steps.toExponential(1)} steps; at most ${MOST_STEPS} are taken.`
     : null;
 }
 

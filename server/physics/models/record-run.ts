@@ -34,6 +34,8 @@ export interface RecordRun {
 }
 
 const SHOWN = 4096;
+/** Steps past which a record is not followed further. */
+export const MOST_STEPS = 10_000_000;
 
 /** A recording as an excitation: straight lines between samples. */
 export function recordedExcitation(acceleration: Float64Array, rate: number): Excitation {
@@ -72,6 +74,7 @@ export function runRecord(
   const motion = new Motion(device, model, excitation.accelerationAt, {
     tolerance,
     period: (2 * Math.PI) / own,
+    most: MOST_STEPS,
     smallest: Math.max((0.3 * excitation.size) / (own * own), 1e-15),
   });
   const node = circuit?.kind === 'supercapacitor' ? circuit.node : null;

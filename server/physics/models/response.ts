@@ -1,7 +1,13 @@
 import type { Device, DeviceResponse, Tone, Vibration } from './device';
 import { linearised } from './linear-device';
 import { notComputed } from './not-computed';
-import { isTooLong, respondByStepping, respondToRecordByStepping, tonesExcitation } from './record-response';
+import {
+  respondByStepping,
+  respondToRecordByStepping,
+  tonesExcitation,
+  whyTooLong,
+  STEPS_PER_PERIOD,
+} from './record-response';
 import { respondToRecordingLinearly } from './recording-response';
 import { openFigures, respondToPeriodByShooting } from './shooting-response';
 import { respondToSpectrum } from './spectrum-response';
@@ -24,17 +30,18 @@ export function respond(device: Device, vibration: Vibration): DeviceResponse {
     }
     case 'spectrum':
       return linear ? respondToSpectrum(device, linear, vibration) : respondToSpectrumByStepping(device, vibration);
-    case 'recording': {
-      const tooLong = isTooLong(vibration.acceleration.length);
-      if (linear) return respondToRecordingLinearly(device, linear, vibration);
-      return tooLong ? notComputed(tooLong) : respondToRecordByStepping(device, vibration.acceleration, vibration.rate);
-    }
+    case 'recording':
+      return linear
+        ? respondToRecordingLinearly(device, linear, vibration)
+        : respondToRecordByStepping(device, vibration.acceleration, vibration.rate);
   }
 }
 
 function respondToTone(device: Device, tone: Tone): DeviceResponse {
   const { circuit } = device;
   if (circuit.kind === 'supercapacitor') {
+    const tooLong = whyTooLong(device, circuit.duration, STEPS_PER_PERIOD * tone.frequency);
+    if (tooLong) return notComputed(tooLong);
     const answer = respondByStepping(
       device,
       tonesExcitation([tone], circuit.duration),

@@ -58,6 +58,7 @@ function settled(
   const motion = new Motion(device, circuit, accelerationAt, {
     tolerance: 1e-6,
     period: (2 * Math.PI) / omega,
+    most: 2000 * periods,
     smallest: 0.1 * size,
   });
   motion.place(0, start.u, start.v, start.current, start.voltage);
@@ -66,7 +67,13 @@ function settled(
 }
 
 /** Every place to start shooting from. */
-function startsFor(device: Device, circuit: CircuitModel, tone: Tone, drive: PeriodicDrive): PeriodStart[] {
+function startsFor(
+  device: Device,
+  circuit: CircuitModel,
+  tone: Tone,
+  drive: PeriodicDrive,
+  thorough: boolean,
+): PeriodStart[] {
   const { stops, restPosition } = device;
   const linear = isMechanicallyLinear({ ...device, stops: null });
   const starts: PeriodStart[] = [];
@@ -95,9 +102,10 @@ function startsFor(device: Device, circuit: CircuitModel, tone: Tone, drive: Per
     const v = omega * Math.min(reach, 4 * gap) * (2 * random() - 1);
     return { u, v, current: 0, voltage: zero.voltage };
   });
+  const plain = [...bounded, settled(device, circuit, drive, zero, 4 * SETTLING)];
+  if (!thorough) return plain;
   return [
-    ...bounded,
-    settled(device, circuit, drive, zero, 4 * SETTLING),
+    ...plain,
     ...bounded.map((start) => settled(device, circuit, drive, start, SETTLING)),
     ...thrown.map((start) => settled(device, circuit, drive, start, SETTLING)),
   ];
@@ -115,12 +123,13 @@ function periodicMotions(
   circuit: CircuitModel,
   tones: readonly Tone[],
   frequency: number,
+  thorough: boolean,
 ): PeriodicMotion[] {
   const drive = periodicDrive(tones, frequency);
   const { omega } = drive;
   const found: PeriodicMotion[] = [];
   const strongest = tones.reduce((best, tone) => (tone.acceleration > best.acceleration ? tone : best));
-  const starts = startsFor(device, circuit, strongest, drive);
+  const starts = startsFor(device, circuit, strongest, drive, thorough);
   // what several tones do together is only known after a while of it
   const several = tones.length > 1;
   for (const first of starts) {
@@ -189,7 +198,7 @@ export function modelNote(circuit: Circuit): string[] {
  */
 export function respondToPeriodByShooting(device: Device, tones: readonly Tone[], frequency: number): DeviceResponse {
   const circuit = circuitModel(device.circuit);
-  const motions = periodicMotions(device, circuit, tones, frequency);
+  const motions = periodicMotions(device, circuit, tones, frequency, true);
   const open = openFigures(device, tones, frequency);
   const tone = tones.length === 1 ? tones[0]! : null;
   const stable = motions.find((motion) => motion.stable);
@@ -272,7 +281,7 @@ export function openFigures(
     const square = samples.reduce((sum, e) => sum + e * e, 0) / samples.length;
     return { rms: Math.sqrt(square), peak: refinedPeak(samples), notes: [] };
   }
-  const motions = periodicMotions({ ...device, coilInductance: 0 }, circuitModel(null), tones, frequency);
+  const motions = periodicMotions({ ...device, coilInductance: 0 }, circuitModel(null), tones, frequency, false);
   const headline = motions.find((motion) => motion.stable) ?? null;
   if (!headline)
     return { rms: null, peak: null, notes: ['Open-circuit EMF is not computed, because no steady motion was found.'] };

@@ -1,6 +1,6 @@
 import type { Device, DeviceResponse, Vibration } from './device';
 import { notComputed } from './not-computed';
-import { isTooLong, respondToRecordByStepping } from './record-response';
+import { whyTooLong, respondToRecordByStepping } from './record-response';
 import { gaussianRecord } from './spectrum-record';
 
 type Spectrum = Extract<Vibration, { kind: 'spectrum' }>;
@@ -16,7 +16,7 @@ export function recordRate(device: Device, spectrum: Spectrum): number {
 export function respondToSpectrumByStepping(device: Device, spectrum: Spectrum): DeviceResponse {
   const rate = recordRate(device, spectrum);
   const samples = Math.round(spectrum.duration * rate) + 1;
-  const tooLong = isTooLong(samples);
+  const tooLong = whyTooLong(device, spectrum.duration, rate);
   if (tooLong) return notComputed(tooLong);
   const record = gaussianRecord(spectrum.points, rate, Math.max(2, samples), spectrum.seed);
   const answer = respondToRecordByStepping(device, record, rate);

@@ -1,5 +1,6 @@
 import type { Device, DeviceResponse, Tone } from './device';
-import { respondByStepping, tonesExcitation } from './record-response';
+import { notComputed } from './not-computed';
+import { respondByStepping, STEPS_PER_PERIOD, tonesExcitation, whyTooLong } from './record-response';
 import { runRecord } from './record-run';
 
 /** Shortest and longest time over which tones are averaged, in periods of the slowest. */
@@ -25,6 +26,9 @@ export function respondToTonesByStepping(device: Device, tones: readonly Tone[])
   const settling = Math.min(longest, DECAYS * Math.max(decay, electrical));
   const supercapacitor = circuit.kind === 'supercapacitor';
   const duration = supercapacitor ? circuit.duration : Math.min(longest, Math.max(LEAST_PERIODS / slowest, 10 / beat));
+  const fastest = Math.max(...tones.map((tone) => tone.frequency));
+  const tooLong = whyTooLong(device, duration + settling, STEPS_PER_PERIOD * fastest);
+  if (tooLong) return notComputed(tooLong);
   const excitation = { ...tonesExcitation(tones, duration), settling: supercapacitor ? 0 : settling };
   const open = runRecord({ ...device, coilInductance: 0 }, null, excitation, 1e-7);
   const answer = respondByStepping(device, excitation, { rms: Math.sqrt(open.mean.emf2), peak: open.emfPeak });
