@@ -8,7 +8,6 @@ import { rememberEstimates } from './remembered-estimates';
 export const estimatesHere = (): Estimator =>
   rememberEstimates({
     engine: engineVersion,
-    // eslint-disable-next-line @typescript-eslint/require-await -- a fault becomes a rejection, as from the threads
     async estimate(request) {
       const answer = answerTo(request);
       if (!answer.ok) throw invalid(answer.issues);
