@@ -43,7 +43,14 @@ export function Component() {
           }
           actions={
             <>
-              {revision.data ? <RevisionActions revision={revision.data} onDone={() => undefined} /> : null}
+              {revision.data ? (
+                <RevisionActions
+                  revision={revision.data}
+                  only={['supersede', 'recall']}
+                  quiet
+                  onDone={() => undefined}
+                />
+              ) : null}
               <Button
                 icon={Download}
                 onPress={() =>

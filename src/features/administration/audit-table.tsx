@@ -28,6 +28,12 @@ const summaryOf = (detail: AuditEntry['detail']): string =>
 
 const hasDetail = (detail: AuditEntry['detail']) => Object.keys(detail).length > 0;
 
+/** What an entry is about by name, where the entry itself tells it. */
+function nameOf({ detail, by, subjectId }: AuditEntry): string | null {
+  if (typeof detail.name === 'string') return detail.name;
+  return by?.id === subjectId ? by.name : null;
+}
+
 const columns: readonly TableColumn<AuditEntry>[] = [
   { id: 'sequence', title: 'No.', value: ({ sequence }) => sequence },
   {
@@ -50,16 +56,10 @@ const columns: readonly TableColumn<AuditEntry>[] = [
   {
     id: 'subject',
     title: 'On what',
-    value: ({ subject, subjectId, detail }) =>
-      [subject, typeof detail.name === 'string' ? detail.name : '', subjectId].filter(Boolean).join(' '),
-    cell: ({ subject, subjectId, detail }) => (
-      <span title={subjectId}>
-        {subject}{' '}
-        {typeof detail.name === 'string' ? (
-          detail.name
-        ) : (
-          <code className="text-sm text-graphite">{subjectId.slice(0, 8)}</code>
-        )}
+    value: (entry) => [entry.subject, nameOf(entry) ?? '', entry.subjectId].filter(Boolean).join(' '),
+    cell: (entry) => (
+      <span title={entry.subjectId}>
+        {entry.subject} {nameOf(entry) ?? <code className="text-sm text-graphite">{entry.subjectId.slice(0, 8)}</code>}
       </span>
     ),
   },

@@ -1,15 +1,15 @@
 import { Link } from 'react-router-dom';
 import type { ReactNode } from 'react';
 import type { Brief, BriefDocument } from '#contracts/briefs';
-import { requirementQuantities, shownByWords } from '#contracts/requirement';
+import { comparisonSign, requirementQuantities, shownByWords } from '#contracts/requirement';
 import type { Requirement } from '#contracts/requirement';
 import { formatDateTime, formatNumber } from '../../lib/format';
 import { DataTable } from '../../ui/data-table';
 import type { TableColumn } from '../../ui/data-table';
 import { KeyFigures } from '../../ui/key-figures';
 import { Section } from '../../ui/page-header';
-import { Quantity } from '../../ui/quantity';
-import { envelopeWords, limitWords, orientationWords } from './brief-words';
+import { Figure, Quantity } from '../../ui/quantity';
+import { envelopeWords, orientationWords } from './brief-words';
 import { VibrationSheet } from './vibration-sheet';
 
 const columns: readonly TableColumn<Requirement>[] = [
@@ -19,7 +19,16 @@ const columns: readonly TableColumn<Requirement>[] = [
     id: 'limit',
     title: 'Limit',
     value: ({ limit }) => limit,
-    cell: (requirement) => <span className="font-mono whitespace-nowrap">{limitWords(requirement)}</span>,
+    cell: ({ quantity, comparison, limit, unit }) => (
+      <>
+        {comparisonSign[comparison]}{' '}
+        <Quantity
+          value={limit}
+          dimension={requirementQuantities[quantity].dimension}
+          {...(unit === '' ? {} : { unit })}
+        />
+      </>
+    ),
   },
   { id: 'shownBy', title: 'Shown by', value: ({ shownBy }) => shownByWords[shownBy] },
 ];
@@ -68,7 +77,7 @@ function Needs({ document }: { document: BriefDocument }) {
         },
         {
           label: 'Life',
-          value: lifeCycles === null ? asked('') : <span className="font-mono">{formatNumber(lifeCycles)} cycles</span>,
+          value: lifeCycles === null ? asked('') : <Figure number={formatNumber(lifeCycles)} unit="cycles" />,
         },
         { label: 'Orientation', value: orientationWords[orientation] },
       ]}

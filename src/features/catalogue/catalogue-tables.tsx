@@ -79,9 +79,22 @@ function columnsOf(entries: readonly CatalogueEntry[], key: string): TableColumn
       id: 'source',
       title: 'Source',
       value: ({ source }) => source,
-      cell: ({ source }) => <span className="block min-w-80 text-sm text-graphite">{source}</span>,
+      cell: ({ source }) => <Source text={source} />,
     },
   ];
+}
+
+/** Where figures come from, in its first words; how well they are known and what to beware of, on demand. */
+function Source({ text }: { text: string }) {
+  const [head = '', ...rest] = text.split(/ (?=\()/);
+  const words = 'block w-60 max-w-full text-sm text-graphite';
+  if (rest.length === 0) return <span className={words}>{text}</span>;
+  return (
+    <details className={words}>
+      <summary>{head}</summary>
+      {rest.join(' ')}
+    </details>
+  );
 }
 
 function KindTable({

@@ -21,7 +21,7 @@ export function RequirementLine({ requirement, shown, margin, verdict }: Require
   const unit = requirement.unit === '' ? {} : { unit: requirement.unit };
   const words = verdict === 'notComputed' ? shown.absent : verdictWords[verdict];
   return (
-    <li className="grid grid-cols-2 items-baseline gap-x-4 border-b border-rule py-1.5 sm:grid-cols-[minmax(0,3fr)_minmax(0,2fr)_minmax(0,3fr)_minmax(0,3fr)_6.5rem] print:grid-cols-[3fr_2fr_3fr_3fr_6.5rem]">
+    <li className="grid grid-cols-2 items-baseline gap-x-4 border-b border-rule py-1.5 sm:grid-cols-[minmax(0,3fr)_minmax(0,2fr)_minmax(0,4fr)_minmax(0,3fr)_6rem] print:grid-cols-[3fr_2fr_4fr_3fr_6rem]">
       <span className="font-medium wrap-anywhere max-sm:col-span-2">{requirement.title}</span>
       <span>
         {comparisonSign[requirement.comparison]} <Quantity value={requirement.limit} dimension={dimension} {...unit} />

@@ -12,15 +12,23 @@ import { useRevisionWay } from './use-revision-way';
 
 interface EventActionsProps {
   subject: EventSubject;
+  /** Steps that belong to this page; all of the chart's unless given. */
+  only?: readonly RevisionEventType[] | undefined;
+  /** The page has another primary action: all steps stand in the menu. */
+  quiet?: boolean | undefined;
   beforeSend?: BeforeSend | undefined;
   onDone: (revision: Revision, event: RevisionEventType) => void;
 }
 
 /** The steps that the chart knows where the subject stands, as the server offers or refuses them. */
-export function EventActions({ subject, beforeSend, onDone }: EventActionsProps) {
+export function EventActions({ subject, only, quiet, beforeSend, onDone }: EventActionsProps) {
   const { events } = useRevisionWay(subject.state);
   const [open, setOpen] = useState<RevisionEventType | null>(null);
-  const { primary, beside, further } = chooseEvents(events, subject);
+  const { primary, beside, further } = chooseEvents(
+    events.filter(({ type }) => only === undefined || only.includes(type)),
+    subject,
+    quiet,
+  );
   if (primary === null && beside.length === 0 && further.length === 0) return null;
   return (
     <>

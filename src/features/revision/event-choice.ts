@@ -39,6 +39,7 @@ export interface EventChoice {
 export function chooseEvents(
   events: readonly WayEvent[],
   { availableEvents, whyNot }: Pick<EventSubject, 'availableEvents' | 'whyNot'>,
+  quiet = false,
 ): EventChoice {
   const offered = events
     .filter(({ type }) => type !== 'closeRemark' && (availableEvents.includes(type) || whyNot[type] !== undefined))
@@ -48,6 +49,7 @@ export function chooseEvents(
       whyNot: availableEvents.includes(type) ? null : (whyNot[type] ?? null),
       ending: ending.has(type),
     }));
+  if (quiet) return { primary: null, beside: [], further: offered };
   const onward = forward.map((type) => offered.find((each) => each.type === type)).filter((each) => each !== undefined);
   const primary = onward.find((each) => each.whyNot === null) ?? onward[0] ?? null;
   const others = offered.filter((each) => each !== primary);

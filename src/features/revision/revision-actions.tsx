@@ -11,6 +11,10 @@ interface RevisionActionsProps {
   revision: Revision;
   /** Finishes a pending save and answers the revision with its newest version, before anything is sent. */
   beforeSend?: BeforeSend | undefined;
+  /** Steps that belong to this page; all of the chart's unless given. */
+  only?: readonly RevisionEventType[];
+  /** The page has another primary action: all steps stand in the menu. */
+  quiet?: boolean;
   /** Told after a step, in place of going where the step leads. */
   onDone?: (revision: Revision, event: RevisionEventType) => void;
 }
@@ -26,7 +30,7 @@ function placeAfter(revision: Revision, event: RevisionEventType): string | null
 }
 
 /** The primary action of a revision, named by its verb, and the other steps of where it stands. */
-export function RevisionActions({ revision, beforeSend, onDone }: RevisionActionsProps) {
+export function RevisionActions({ revision, beforeSend, only, quiet, onDone }: RevisionActionsProps) {
   const navigate = useNavigate();
   const done = (after: Revision, event: RevisionEventType) => {
     tell.done(`${after.design.number} ${after.letter}: ${stateWords[after.state].toLowerCase()}`);
@@ -37,5 +41,5 @@ export function RevisionActions({ revision, beforeSend, onDone }: RevisionAction
     const place = placeAfter(after, event);
     if (place !== null) void navigate(place);
   };
-  return <EventActions subject={revisionSubject(revision)} beforeSend={beforeSend} onDone={done} />;
+  return <EventActions subject={revisionSubject(revision)} {...{ beforeSend, only, quiet }} onDone={done} />;
 }
