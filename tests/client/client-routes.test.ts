@@ -1,7 +1,7 @@
 import type { RouteObject } from 'react-router-dom';
 import { expect, test } from 'vitest';
 import { clientRoutes } from '#contracts/client-routes';
-import { router } from '#client/app/router';
+import { router } from '../../src/app/router';
 
 /** Full paths of all screens; what leads to “not found” is none. */
 const pathsOf = (routes: readonly RouteObject[], above = ''): string[] =>
