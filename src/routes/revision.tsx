@@ -1,5 +1,5 @@
 import { useQuery, useQueryClient, useSuspenseQuery } from '@tanstack/react-query';
-import { useMemo, useState } from 'react';
+import { useEffect, useMemo, useState } from 'react';
 import { Link, useParams } from 'react-router-dom';
 import type { LoaderFunctionArgs } from 'react-router-dom';
 import type { Estimate } from '#contracts/estimates';
@@ -80,6 +80,11 @@ function DraftPage({ revision, letters }: PageProps) {
   const client = useQueryClient();
   const draft = useDraft(revision, (saved) => client.setQueryData(revisionQuery(revision.id).queryKey, saved));
   const { state } = draft;
+  const { kind } = state;
+  useEffect(() => {
+    // What differs is shown against the draft as it is now, not as it was when this page was opened.
+    if (kind === 'conflict') void client.invalidateQueries({ queryKey: revisionQuery(revision.id).queryKey });
+  }, [kind, client, revision.id]);
   const theirs = async () => {
     const newest = await readRevision(revision.id);
     client.setQueryData(revisionQuery(revision.id).queryKey, newest);
@@ -100,7 +105,11 @@ function DraftPage({ revision, letters }: PageProps) {
             mine={draft.draft}
             theirs={revision}
             onTakeTheirs={async () => draft.takeTheirs(await theirs())}
-            onKeepMine={async () => draft.keepMine(await theirs())}
+            base={draft.base}
+            onKeep={async (make) => {
+              const newest = await theirs();
+              draft.keep(newest, make(newest.document as Draft));
+            }}
           />
         ) : (
           <RestoredNotice restored={draft.restored} refused={state.kind === 'refused' ? state.message : null} />

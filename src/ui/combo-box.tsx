@@ -52,7 +52,7 @@ export function ComboBox<T extends string>(props: ComboBoxProps<T>) {
         <Input
           ref={ref as Ref<HTMLInputElement>}
           placeholder={props.placeholder}
-          className={classNames(props.mono && 'font-mono')}
+          className={classNames('pr-0!', props.mono && 'font-mono')}
         />
         <Button className="grid w-8 shrink-0 place-items-center self-stretch" aria-label={`Choices for ${label}`}>
           <ChevronDown aria-hidden className="size-4 text-graphite" />

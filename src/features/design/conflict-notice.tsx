@@ -6,7 +6,7 @@ import { download } from '../../lib/download';
 import { formatAgo, formatCount } from '../../lib/format';
 import { messageOf } from '../../lib/request-error';
 import { Button } from '../../ui/button';
-import { differences } from './document-path';
+import { differences, joined, sameDocument } from './document-path';
 import type { Draft } from './document-path';
 import { pathInWords } from './labels';
 
@@ -14,22 +14,27 @@ interface ConflictNoticeProps {
   message: string;
   changed: readonly Change[];
   mine: Draft;
+  /** What both started from. */
+  base: Draft;
   /** The draft as it stands on the server; asked for anew before either is chosen. */
   theirs: Revision;
   onTakeTheirs: () => Promise<void>;
-  onKeepMine: () => Promise<void>;
+  onKeep: (make: (theirs: Draft) => Draft) => Promise<void>;
 }
 
 const shown = (value: unknown): string =>
   value === undefined ? 'left out' : typeof value === 'string' ? value : JSON.stringify(value);
 
 /** Two drafts of one revision: what differs, and the choice between them. Neither is lost by looking. */
-export function ConflictNotice({ message, changed, mine, theirs, onTakeTheirs, onKeepMine }: ConflictNoticeProps) {
+export function ConflictNotice({ message, changed, mine, base, theirs, onTakeTheirs, onKeep }: ConflictNoticeProps) {
   const [problem, setProblem] = useState<string | null>(null);
-  const [busy, setBusy] = useState<'mine' | 'theirs' | null>(null);
+  const [busy, setBusy] = useState<'mine' | 'theirs' | 'both' | null>(null);
   const differing = differences(mine, theirs.document);
   const closed = !theirs.mayEdit;
-  const choose = (which: 'mine' | 'theirs', act: () => Promise<void>) => () => {
+  const document = theirs.document as Draft;
+  const both = sameDocument(base, document) ? null : joined(base, mine, document);
+  const joinable = !closed && both !== null && both.clashes.length === 0;
+  const choose = (which: 'mine' | 'theirs' | 'both', act: () => Promise<void>) => () => {
     setBusy(which);
     setProblem(null);
     act()
@@ -88,9 +93,22 @@ export function ConflictNotice({ message, changed, mine, theirs, onTakeTheirs, o
       )}
       {problem ? <p className="text-cinnabar">{problem}</p> : null}
       <div className="flex flex-wrap gap-2.5">
+        {joinable ? (
+          <Button
+            variant="primary"
+            pending={busy === 'both'}
+            onPress={choose('both', () => onKeep((newest) => joined(base, mine, newest)?.document ?? mine))}
+          >
+            Keep both changes
+          </Button>
+        ) : null}
         {closed ? null : (
-          <Button variant="primary" pending={busy === 'mine'} onPress={choose('mine', onKeepMine)}>
-            Keep mine
+          <Button
+            variant={joinable ? 'secondary' : 'primary'}
+            pending={busy === 'mine'}
+            onPress={choose('mine', () => onKeep(() => mine))}
+          >
+            Keep mine only
           </Button>
         )}
         <Button pending={busy === 'theirs'} onPress={choose('theirs', onTakeTheirs)}>

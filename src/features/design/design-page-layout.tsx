@@ -26,7 +26,7 @@ export function DesignPageLayout({ notices, bar, fields, strip, results, figures
       <div className="sticky top-12 z-20 border-b border-rule bg-paper px-4 py-1.5 min-[900px]:top-0 @[720px]:hidden">
         {bar}
       </div>
-      <div className="flex flex-col @[720px]:grid @[720px]:grid-cols-[18rem_minmax(0,1fr)] @[1000px]:grid-cols-[18rem_minmax(0,1fr)_18rem] @[1150px]:grid-cols-[20rem_minmax(0,1fr)_19rem] @[1800px]:grid-cols-[22rem_minmax(0,1fr)_24rem]">
+      <div className="flex flex-col @[720px]:grid @[720px]:grid-cols-[19rem_minmax(0,1fr)] @[1000px]:grid-cols-[18.5rem_minmax(0,1fr)_18rem] @[1150px]:grid-cols-[20rem_minmax(0,1fr)_19rem] @[1800px]:grid-cols-[22rem_minmax(0,1fr)_24rem]">
         <section
           aria-label="Design document"
           className="order-3 border-rule px-4 py-5 @[720px]:order-none @[720px]:row-span-2 @[720px]:border-r"

@@ -74,3 +74,25 @@ export function differences(
 }
 
 export const sameDocument = (a: unknown, b: unknown): boolean => a === b || differences(a, b).length === 0;
+
+/**
+ * My changes put onto their document, where both started from the same `base`. Null where the two cannot be told apart by value: one
+ * side added or removed an entry of a list, so that its places no longer mean the same.
+ * @returns the joined document, and the paths that both changed to different values; there mine stands.
+ */
+export function joined(base: Draft, mine: Draft, theirs: Draft): { document: Draft; clashes: string[] } | null {
+  const listsChanged = (document: Draft) =>
+    differences(document, base).some(({ path }) => {
+      const parent = path.split('.').slice(0, -1).join('.');
+      return Array.isArray(readAt(base, parent)) && listLength(base, parent) !== listLength(document, parent);
+    });
+  if (listsChanged(mine) || listsChanged(theirs)) return null;
+  const ours = differences(mine, base);
+  const others = new Set(differences(theirs, base).map(({ path }) => path));
+  return {
+    document: ours.reduce((document, { path, mine: value }) => writeAt(document, path, value), theirs),
+    clashes: ours
+      .filter(({ path, mine: value }) => others.has(path) && !Object.is(readAt(theirs, path), value))
+      .map(({ path }) => path),
+  };
+}

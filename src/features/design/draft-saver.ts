@@ -101,7 +101,7 @@ export class DraftSaver {
   private failures = 0;
   private readonly listeners = new Set<() => void>();
   private readonly options: Required<DraftSaverOptions>;
-  private snapshot: { draft: Draft; state: SaveState; restored: boolean };
+  private snapshot: { draft: Draft; base: Draft; state: SaveState; restored: boolean };
   private restored = false;
   private stopped = false;
 
@@ -126,7 +126,7 @@ export class DraftSaver {
               message: 'This draft was changed after what you typed here was last saved.',
             };
     } else if (kept) keep.clear();
-    this.snapshot = { draft: this.draft, state: this.state, restored: this.restored };
+    this.snapshot = { draft: this.draft, base: this.sent, state: this.state, restored: this.restored };
   }
 
   /** Begins to save what was restored; called once the page is there. */
@@ -210,11 +210,15 @@ export class DraftSaver {
     this.tell();
   }
 
-  keepMine(revision: Pick<Revision, 'version' | 'document'>): void {
+  /** Saves a document over theirs: mine as it stands, or both joined. */
+  keep(revision: Pick<Revision, 'version' | 'document'>, document: Draft = this.draft): void {
     this.version = revision.version;
     this.sent = asDraft(revision.document);
+    this.draft = document;
     this.state = { kind: 'waiting' };
     this.restored = false;
+    this.options.keep.write({ version: this.version, document, at: this.options.now().toISOString() });
+    this.tell();
     void this.run();
   }
 
@@ -266,7 +270,7 @@ export class DraftSaver {
   }
 
   private tell(): void {
-    this.snapshot = { draft: this.draft, state: this.state, restored: this.restored };
+    this.snapshot = { draft: this.draft, base: this.sent, state: this.state, restored: this.restored };
     for (const listener of this.listeners) listener();
   }
 }

@@ -7,6 +7,8 @@ import { readRevision, saveDraft } from './queries';
 
 export interface DraftInHand {
   draft: Draft;
+  /** What the server had when the changes in hand were begun. */
+  base: Draft;
   state: SaveState;
   /** What is shown was typed earlier in this browser and had not reached the server. */
   restored: boolean;
@@ -15,7 +17,8 @@ export interface DraftInHand {
   flush: () => Promise<Revision>;
   retry: () => void;
   takeTheirs: (revision: Revision) => void;
-  keepMine: (revision: Revision) => void;
+  /** Saves over theirs what is in hand, or another document made of both. */
+  keep: (revision: Revision, document?: Draft) => void;
 }
 
 /** The draft of one revision in the hands of the person at this page. */
@@ -45,7 +48,7 @@ export function useDraft(revision: Revision, onSaved: (revision: Revision) => vo
     };
   }, [saver]);
   useEffect(() => saver.adopt(revision), [saver, revision]);
-  const { draft, state, restored } = useSyncExternalStore(saver.subscribe, saver.read);
+  const { draft, base, state, restored } = useSyncExternalStore(saver.subscribe, saver.read);
   const edit = useCallback((next: Draft) => saver.edit(next), [saver]);
   const flush = useCallback(async () => {
     await saver.flush();
@@ -54,14 +57,15 @@ export function useDraft(revision: Revision, onSaved: (revision: Revision) => vo
   return useMemo(
     () => ({
       draft,
+      base,
       state,
       restored,
       edit,
       flush,
       retry: () => saver.retry(),
       takeTheirs: (theirs: Revision) => saver.takeTheirs(theirs),
-      keepMine: (theirs: Revision) => saver.keepMine(theirs),
+      keep: (theirs: Revision, document?: Draft) => saver.keep(theirs, document),
     }),
-    [draft, state, restored, edit, flush, saver],
+    [draft, base, state, restored, edit, flush, saver],
   );
 }

@@ -181,6 +181,8 @@ export function Springs({
     <g fill="none" className="stroke-ink" strokeWidth={small ? 0.8 : 1.15} strokeLinejoin="round" strokeOpacity={0.85}>
       {springs.map((spring, index) => {
         const to = spring.attachedAt + at;
+        // Held by hand beyond the spring's fixed end: there is no spring to draw.
+        if ((to - spring.fixedAt) * (spring.attachedAt - spring.fixedAt) <= 0) return null;
         const turns = small && !spring.toScale ? 4 : spring.turns;
         const points = zigzag(spring.fixedAt, to, spring.y, spring.amplitude, turns);
         return (

@@ -30,14 +30,15 @@ interface LayoutRequest {
   drawing: Drawing;
   /** Count of curves under the drawing. */
   lanes: number;
-  /** Tallest the section may become, px. */
+  /** Tallest the section may become, px; grows with the page unless given. */
   tallest?: number;
 }
 
 const roomForDimensions = 30;
 
 /** Fits drawing and curves into a width; the drawing decides, so that it is never taller than `tallest`. */
-export function stripLayout({ width, domain, drawing, lanes, tallest = 340 }: LayoutRequest): StripLayout {
+export function stripLayout({ width, domain, drawing, lanes, ...rest }: LayoutRequest): StripLayout {
+  const tallest = rest.tallest ?? Math.max(340, Math.min(520, 0.34 * width));
   const compact = width < 520;
   const gutter = compact ? 34 : 42;
   const margin = compact ? 8 : 14;

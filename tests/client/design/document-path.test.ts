@@ -2,6 +2,7 @@ import { describe, expect, it } from 'vitest';
 import {
   differences,
   insertAt,
+  joined,
   readAt,
   removeAt,
   sameDocument,
@@ -43,6 +44,23 @@ describe('a draft by path', () => {
     ]);
     expect(sameDocument(draft, structuredClone(draft))).toBe(true);
     expect(differences({ a: 1 }, { a: 1, b: 2 })).toEqual([{ path: 'b', mine: undefined, theirs: 2 }]);
+  });
+
+  it('joins two people’s changes where they touch different values', () => {
+    const mine = writeAt(draft, 'suspension.stiffness', '3 kN/m');
+    const theirs = writeAt(draft, 'magnets.0.length', '12 mm');
+    expect(joined(draft, mine, theirs)).toEqual({
+      document: writeAt(theirs, 'suspension.stiffness', '3 kN/m'),
+      clashes: [],
+    });
+    const clashing = joined(draft, mine, writeAt(draft, 'suspension.stiffness', '4 kN/m'));
+    expect(clashing?.clashes).toEqual(['suspension.stiffness']);
+    expect(readAt(clashing?.document, 'suspension.stiffness')).toBe('3 kN/m');
+  });
+
+  it('does not join where a list has grown or shrunk: its places mean something else then', () => {
+    expect(joined(draft, removeAt(draft, 'magnets', 0), writeAt(draft, 'stops.lower', '-1 mm'))).toBeNull();
+    expect(joined(draft, draft, insertAt(draft, 'magnets', { length: '1 mm' }))).toBeNull();
   });
 
   it('says where a value stands in words', () => {

@@ -96,7 +96,7 @@ describe('DraftSaver', () => {
     expect(save).toHaveBeenCalledTimes(1);
     await expect(saver.flush()).rejects.toThrow(/Choose first/);
     refuse = false;
-    saver.keepMine(revisionOf(4, { turns: '1100' }));
+    saver.keep(revisionOf(4, { turns: '1100' }));
     await vi.advanceTimersByTimeAsync(0);
     expect(save.mock.calls[1]).toEqual([4, { turns: '901' }]);
     expect(saver.read().state.kind).toBe('saved');

@@ -134,7 +134,7 @@ describe('the shared scale', () => {
       const vertical = layout.y(0) - layout.y(1);
       expect(vertical).toBeCloseTo(horizontal, 9);
       expect(layout.right).toBeLessThanOrEqual(width);
-      expect(layout.sectionBottom - layout.sectionTop).toBeLessThanOrEqual(341);
+      expect(layout.sectionBottom - layout.sectionTop).toBeLessThanOrEqual(521);
       expect(layout.positionAt(layout.x(3.21))).toBeCloseTo(3.21, 9);
     }
   });
