@@ -4,7 +4,6 @@ import { Pending } from '../ui/pending';
 export function FirstPending() {
   return (
     <main className="p-10">
-      <h1 className="sr-only">Tremolode</h1>
       <Pending label="Loading Tremolode" lines={5} className="max-w-xl" />
     </main>
   );

@@ -1,12 +1,14 @@
+import { createElement } from 'react';
+import type { ComponentType } from 'react';
 import { createBrowserRouter, redirect } from 'react-router-dom';
-import type { RouteObject } from 'react-router-dom';
+import type { LoaderFunction, RouteObject } from 'react-router-dom';
 import { sessionQuery } from '../features/session/queries';
 import { queryClient } from '../lib/query-client';
 import { RootError, RouteError } from '../routes/error';
 import { Component as NotFound } from '../routes/not-found';
 import { FirstPending } from './first-pending';
 
-type LoadScreen = () => Promise<Pick<RouteObject, 'loader' | 'Component'>>;
+type LoadScreen = () => Promise<{ loader?: LoaderFunction; Component?: ComponentType }>;
 interface Screen {
   path: string;
   load: LoadScreen;
@@ -40,14 +42,21 @@ const screens: readonly Screen[] = [
   { path: 'account', load: () => import('../routes/account') },
 ];
 
-/** Takes loader and component from the file of a screen; a fault of it leaves the rail usable. */
-const lazily = (load: LoadScreen): Pick<RouteObject, 'lazy' | 'ErrorBoundary'> => ({
-  lazy: async () => {
-    const { loader, Component } = await load();
-    return { loader, Component };
-  },
-  ErrorBoundary: RouteError,
-});
+/**
+ * Fetches the file of a screen in a loader, then runs the screen's own loader. React Router's `lazy` would do the same, but
+ * leaves the page blank where the file cannot be fetched; a failed loader is shown, and tried again on demand.
+ */
+function lazily(load: LoadScreen): Pick<RouteObject, 'loader' | 'Component' | 'ErrorBoundary'> {
+  let screen: Awaited<ReturnType<LoadScreen>> = {};
+  return {
+    loader: async (request) => {
+      screen = await load();
+      return screen.loader?.(request) ?? null;
+    },
+    Component: () => (screen.Component ? createElement(screen.Component) : null),
+    ErrorBoundary: RouteError,
+  };
+}
 
 const routeOf = ({ path, load, children }: Screen): RouteObject => ({
   path,
@@ -65,7 +74,7 @@ export const router = createBrowserRouter([
   {
     id: 'shell',
     path: '/',
-    lazy: () => import('./shell'),
+    ...lazily(() => import('./shell')),
     ErrorBoundary: RootError,
     HydrateFallback: FirstPending,
     // Before any loader of the screens: who is not signed in asks the server for nothing else.

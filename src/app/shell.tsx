@@ -64,7 +64,6 @@ export function Component() {
           <Suspense
             fallback={
               <PageBody>
-                <h1 className="sr-only">Loading</h1>
                 <Pending label="Loading the page" lines={6} />
               </PageBody>
             }

@@ -2,11 +2,12 @@ import { useEffect } from 'react';
 import { isRouteErrorResponse, useLocation, useRevalidator, useRouteError } from 'react-router-dom';
 import { isRequestError } from '../lib/request-error';
 import { ErrorState } from '../ui/error-state';
+import type { ErrorStateProps } from '../ui/error-state';
 import { PageBody, PageHeader } from '../ui/page-header';
 import { Component as NotFound } from './not-found';
 
-/** A chunk that is gone because a newer version was installed while the page was open. */
-const isOutdated = (error: unknown) =>
+/** The file of a screen did not arrive: no network, or it is gone because a newer version was installed meanwhile. */
+const isUnfetched = (error: unknown) =>
   error instanceof TypeError && /dynamically imported module|module script|preload/i.test(error.message);
 
 /** Any fault of a screen, inside the shell: the rail stays usable. */
@@ -17,6 +18,12 @@ export function RouteError() {
   useEffect(() => {
     if (!isRequestError(error) && !isRouteErrorResponse(error)) console.warn(`The screen ${pathname} failed`, error);
   }, [error, pathname]);
+
+  useEffect(() => {
+    const retryWhenBack = () => void revalidator.revalidate();
+    window.addEventListener('online', retryWhenBack);
+    return () => window.removeEventListener('online', retryWhenBack);
+  }, [revalidator]);
 
   if (isRouteErrorResponse(error) && error.status === 404) return <NotFound />;
   if (isRequestError(error, 'unauthenticated'))
@@ -29,26 +36,37 @@ export function RouteError() {
         />
       </PageBody>
     );
-  const outdated = isOutdated(error);
+  const retry = () => void revalidator.revalidate();
+  if (isUnfetched(error))
+    return navigator.onLine ? (
+      <Fault
+        heading="This page could not be fetched"
+        title="A newer version may have been installed"
+        advice="Reload to go on with it. What was saved before is safe."
+        onRetry={() => window.location.reload()}
+      />
+    ) : (
+      <Fault
+        heading="This page could not be fetched"
+        title="No connection to the server"
+        advice="The page loads by itself once the network is back."
+        onRetry={retry}
+      />
+    );
+  const heading = isRequestError(error, 'notFound')
+    ? 'Not found'
+    : isRequestError(error, 'forbidden')
+      ? 'Not open to you'
+      : 'This page could not be shown';
+  return <Fault heading={heading} error={error} onRetry={retry} />;
+}
+
+function Fault({ heading, ...state }: { heading: string } & ErrorStateProps) {
   return (
     <>
-      <PageHeader
-        title={
-          isRequestError(error, 'notFound')
-            ? 'Not found'
-            : isRequestError(error, 'forbidden')
-              ? 'Not open to you'
-              : 'This page could not be shown'
-        }
-      />
+      <PageHeader title={heading} />
       <PageBody>
-        <ErrorState
-          error={outdated ? undefined : error}
-          title={outdated ? 'A newer version has been installed' : undefined}
-          advice={outdated ? 'Reload the page to go on with it.' : undefined}
-          kept={outdated ? 'Drafts are saved on the server as you go.' : undefined}
-          onRetry={outdated ? () => window.location.reload() : () => void revalidator.revalidate()}
-        />
+        <ErrorState {...state} />
       </PageBody>
     </>
   );
