@@ -40,6 +40,8 @@ export interface PeriodicDrive {
   omega: number;
   /** Points shown per period. */
   points: number;
+  /** A size of the acceleration, m/s². */
+  size: number;
   accelerationAt(t: number): number;
 }
 
@@ -61,6 +63,7 @@ export function periodicDrive(tones: readonly Tone[], frequency: number): Period
     period: 1 / frequency,
     omega: 2 * Math.PI * strongest.frequency,
     points: Math.min(MOST_POINTS, POINTS * Math.round(fastest / frequency)),
+    size: parts.reduce((sum, part) => sum + part.size, 0),
     accelerationAt:
       parts.length === 1
         ? (t) => only.size * Math.sin(only.omega * t + only.phase)
@@ -92,7 +95,7 @@ export function shoot(
 ): PeriodicMotion {
   const { omega, period, points, accelerationAt } = drive;
   const n = 2 + circuit.capacitors;
-  const size = Math.max(Math.hypot(guess.u, guess.v / omega), 1e-12);
+  const size = Math.max(Math.hypot(guess.u, guess.v / omega), drive.size / (omega * omega));
   const motion = new Motion(device, circuit, accelerationAt, {
     tolerance,
     period: (2 * Math.PI) / omega,

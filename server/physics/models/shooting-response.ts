@@ -53,8 +53,7 @@ function settled(
   periods: number,
 ): PeriodStart {
   const { omega, period, accelerationAt } = drive;
-  let size = Math.hypot(start.u, start.v / omega);
-  for (let n = 0; n < 16; n++) size = Math.max(size, Math.abs(accelerationAt((n * period) / 16)) / (omega * omega));
+  const size = Math.max(Math.hypot(start.u, start.v / omega), drive.size / (omega * omega));
   const motion = new Motion(device, circuit, accelerationAt, {
     tolerance: 1e-6,
     period: (2 * Math.PI) / omega,
