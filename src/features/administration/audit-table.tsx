@@ -22,7 +22,7 @@ const summaryOf = (detail: AuditEntry['detail']): string =>
     Object.entries(detail)
       .filter(([key, value]) => key !== 'name' && value !== null && !/Id$|^digest$/.test(key))
       .map(([key, value]) => `${key} ${cut(words(value), 48)}`)
-      .join(', ') || Object.keys(detail).join(', '),
+      .join('; ') || Object.keys(detail).join('; '),
     110,
   );
 
@@ -58,7 +58,7 @@ const columns: readonly TableColumn<AuditEntry>[] = [
     title: 'On what',
     value: (entry) => [entry.subject, nameOf(entry) ?? '', entry.subjectId].filter(Boolean).join(' '),
     cell: (entry) => (
-      <span title={entry.subjectId}>
+      <span title={entry.subjectId} className="@2xl:whitespace-nowrap">
         {entry.subject} {nameOf(entry) ?? <code className="text-sm text-graphite">{entry.subjectId.slice(0, 8)}</code>}
       </span>
     ),
