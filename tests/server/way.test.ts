@@ -104,6 +104,23 @@ describe('one design, from draft to record, by three people and the bench', () =
   });
 });
 
+describe('mail about an own step', () => {
+  it('goes to the other authors and not to who took it', async () => {
+    const { designer, server } = team;
+    const second = await server.as('designer');
+    const draft = await createDraft(designer);
+    await second.put(`/api/revisions/${draft.id}/document`, {
+      version: draft.version,
+      document: { ...(draft.document as object), title: 'By two' },
+    });
+    await send(designer, draft, 'submit');
+    const remarked = await send(designer, draft, 'remark');
+    const event_id = `revision ${draft.id} version ${remarked.version}`;
+    const told = await server.db('mail_messages').where({ event_id }).pluck<string[]>('recipient_id');
+    expect(told).toEqual([second.personId]);
+  });
+});
+
 describe('the side ways', () => {
   it('changes requested: the next revision is a copy, its authors are carried over', async () => {
     const { designer, reviewer, server } = team;
