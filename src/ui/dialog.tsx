@@ -37,14 +37,19 @@ export function Dialog({ title, isOpen, onClose, children, footer, width = 'narr
           widths[width],
         )}
       >
-        <AriaDialog role={role} className="flex max-h-[88dvh] flex-col outline-none sm:max-h-[80vh]">
+        <AriaDialog
+          role={role}
+          // What lies behind is hidden from assistive technology; this says so to those who only look at the dialog.
+          render={(props) => <section {...props} aria-modal />}
+          className="flex max-h-[88dvh] flex-col outline-none sm:max-h-[80vh]"
+        >
           <div className="flex items-start justify-between gap-4 border-b border-rule px-5 py-3.5">
             <Heading slot="title" level={2} className="pt-1">
               {title}
             </Heading>
             <IconButton icon={X} label="Close" size="small" onPress={onClose} className="-mr-1.5" />
           </div>
-          <div className="overflow-y-auto px-5 py-4">{children}</div>
+          <div className="scroll-pb-14 overflow-y-auto px-5 py-4">{children}</div>
           {footer ? (
             <div className="flex flex-wrap justify-end gap-2.5 border-t border-rule px-5 py-3.5">{footer}</div>
           ) : null}
