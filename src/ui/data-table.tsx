@@ -17,7 +17,7 @@ import { HeaderCell, TableRow } from './data-table-parts';
 import { TableToolbar } from './data-table-toolbar';
 import { EmptyState } from './empty-state';
 
-export type { CellValue, TableColumn } from './data-table-column';
+export type { TableColumn } from './data-table-column';
 
 export interface DataTableProps<Row> {
   /** What the rows are: “Briefs”. Names the table for screen readers, its file, and its remembered columns. */

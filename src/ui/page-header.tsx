@@ -91,8 +91,3 @@ export function Section({ title, aside, children, className }: SectionProps) {
     </section>
   );
 }
-
-/** A raised surface for one drawing, plot or table. */
-export function Sheet({ children, className }: { children: ReactNode; className?: string }) {
-  return <div className={classNames('sheet p-4', className)}>{children}</div>;
-}

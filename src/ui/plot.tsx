@@ -14,7 +14,7 @@ import { defaultRole } from './plot-series';
 import type { PlotAxis, PlotProps, PlotSeries, SeriesRole } from './plot-series';
 import { readPlotColours } from './plot-theme';
 
-export type { PlotAxis, PlotProps, PlotSeries, SeriesRole } from './plot-series';
+export type { PlotAxis, PlotProps, PlotSeries } from './plot-series';
 
 const PlotDrawing = lazy(() => import('./plot-drawing'));
 

@@ -45,8 +45,6 @@ export function Status({ tone, children, className }: StatusProps) {
   );
 }
 
-export const toneClass = (tone: Tone): string => colours[tone];
-
 /** A small count or mark, as beside a tab or a rail entry. */
 export function Count({ children, tone = 'active', label }: { children: ReactNode; tone?: Tone; label?: string }) {
   return (
