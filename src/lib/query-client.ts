@@ -7,7 +7,13 @@ const worthRetrying = (failures: number, error: unknown) =>
 
 export const queryClient = new QueryClient({
   defaultOptions: {
-    queries: { networkMode: 'always', staleTime: 15_000, gcTime: 10 * 60_000, retry: worthRetrying, refetchOnWindowFocus: true },
+    queries: {
+      networkMode: 'always',
+      staleTime: 15_000,
+      gcTime: 10 * 60_000,
+      retry: worthRetrying,
+      refetchOnWindowFocus: true,
+    },
     mutations: { retry: false, networkMode: 'always' },
   },
   mutationCache: new MutationCache({

@@ -101,7 +101,7 @@ export function TableRow<Row>({ row, index, isCurrent, onCurrent, columns, numer
             role="cell"
             key={column.id}
             className={classNames(
-              'grid grid-cols-[7rem_minmax(0,1fr)] gap-x-3 py-0.5 align-top @2xl:table-cell @2xl:px-3.5 @2xl:py-2',
+              'grid grid-cols-[7rem_minmax(0,1fr)] gap-x-3 py-0.5 align-middle @2xl:table-cell @2xl:px-3.5 @2xl:py-2',
               end && '@2xl:text-right',
               typeof value === 'number' && !column.cell && 'font-mono',
               lead && 'font-semibold',
