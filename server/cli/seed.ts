@@ -16,11 +16,14 @@ export interface DemoSignIn {
  * steps, signatures, audit entries and messages. The same story each time, ending the day before it is put in.
  */
 export async function seedDemo(deps: Deps): Promise<{ signIns: DemoSignIn[] }> {
+  // Some two hundred short transactions: waiting for the disk after each would take most of the time.
+  await deps.db.raw('PRAGMA synchronous = NORMAL');
   const stage = await openStage(deps, storyDays);
   for (const { day, time, play } of story) {
     stage.at(day, time);
     await play(stage);
   }
+  await deps.db.raw('PRAGMA synchronous = FULL');
   const keys = Object.keys(people) as PersonKey[];
   return {
     signIns: keys.map((key) => ({ email: addressOf(key), password: demoPassword, roles: [...people[key].roles] })),
