@@ -6,9 +6,9 @@ import { catalogueWires } from './catalogue-wires';
 import type { CatalogueWire } from './catalogue-wires';
 
 export { catalogueDiodes } from './catalogue-diodes';
-export type { CatalogueDiode, ShockleyDiode } from './catalogue-diodes';
+export type { CatalogueDiode } from './catalogue-diodes';
 export { catalogueMagnets } from './catalogue-magnets';
-export type { CatalogueGrade, CatalogueMagnet, MagnetMaterial } from './catalogue-magnets';
+export type { CatalogueGrade, CatalogueMagnet } from './catalogue-magnets';
 export { catalogueWires } from './catalogue-wires';
 export type { CatalogueWire } from './catalogue-wires';
 

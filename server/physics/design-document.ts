@@ -8,7 +8,7 @@ import { acrossSuspension, damping, movingMass, stops, throughSuspension } from 
 import { quantityOr } from './document-schema';
 
 export { designField, designFields } from './design-fields';
-export type { DesignFieldName, DocumentField } from './design-fields';
+export type { DocumentField } from './design-fields';
 export { DocumentError } from './document-error';
 export type { DocumentIssue } from './document-error';
 
@@ -71,11 +71,8 @@ export type DesignDocument = z.output<typeof designDocumentSchema>;
 export type ThroughDesign = z.output<typeof throughDesign>;
 export type AcrossDesign = z.output<typeof acrossDesign>;
 export type CylinderMagnet = z.output<typeof cylinderMagnet>;
-export type BlockMagnet = z.output<typeof blockMagnet>;
 export type AxialCoil = z.output<typeof axialCoil>;
 export type FaceCoil = z.output<typeof faceCoil>;
-export type Circuit = z.output<typeof circuit>;
-export type DesignSuspension = z.output<typeof throughSuspension>;
 
 /** The canonical form, or everything that keeps the text from being a design document. */
 export type DesignReading =

@@ -11,9 +11,6 @@ export type { DocumentField } from './document-field';
  */
 export const designFields = { ...mechanicalFields, ...magneticFields, ...circuitFields } as const;
 
-/** Path pattern of a number in a design document. */
-export type DesignFieldName = keyof typeof designFields;
-
 const named: Readonly<Record<string, DocumentField>> = designFields;
 
 /**

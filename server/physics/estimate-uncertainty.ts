@@ -12,7 +12,6 @@ import { windingsOf } from './models/winding';
 import { parseVibrationDocument } from './vibration-document';
 
 export { tolerancesOf } from './estimate-tolerances';
-export type { Tolerance } from './estimate-tolerances';
 
 /** What one input adds to the uncertainty of load power. SI. */
 export interface Contributor {

@@ -16,10 +16,9 @@ import type { Windings } from './models/winding';
 import { readVibrationDocument } from './vibration-document';
 import type { VibrationDocument } from './vibration-document';
 
-export { engineVersion } from './engine';
 export { DocumentError } from './document-error';
 export type { DocumentIssue } from './document-error';
-export type { Caution, CautionSeverity, Estimate, Figure } from './estimate-shape';
+export type { Estimate } from './estimate-shape';
 
 /** Most positions of a coupling curve. */
 export const mostPositions = 20_001;

@@ -49,9 +49,6 @@ export const flux: DimensionExponents = [2, 1, -2, -1, 0, 0];
 export const fluxDensity: DimensionExponents = [0, 1, -2, -1, 0, 0];
 export const fieldStrength: DimensionExponents = [-1, 0, 0, 1, 0, 0];
 
-/** Standard gravity in m/s² (exact by definition, 3rd CGPM 1901). */
-export const standardGravity = 9.80665;
-
 const units: Readonly<Record<string, UnitDefinition>> = {
   m: unit(length, 1, 0, true),
   in: unit(length, 254, -4),

@@ -1,7 +1,10 @@
 import { existsSync, readFileSync } from 'node:fs';
 import { createRequire } from 'node:module';
+import type * as AxeCoreModule from 'axe-core';
 import { chromium } from 'playwright-core';
 import type { Browser, BrowserContext, BrowserContextOptions, Page } from 'playwright-core';
+
+type AxeCore = typeof AxeCoreModule;
 
 const axeSource = readFileSync(createRequire(import.meta.url).resolve('axe-core/axe.min.js'), 'utf8');
 
@@ -66,7 +69,7 @@ export function watchErrors(page: Page, expected: readonly RegExp[] = []): strin
 export async function axeViolations(page: Page): Promise<string[]> {
   await page.evaluate(axeSource);
   return page.evaluate(async () => {
-    const { axe } = globalThis as unknown as { axe: typeof import('axe-core') };
+    const { axe } = globalThis as unknown as { axe: AxeCore };
     const { violations } = await axe.run(document, {
       runOnly: ['wcag2a', 'wcag2aa', 'wcag21a', 'wcag21aa', 'wcag22aa', 'best-practice'],
     });

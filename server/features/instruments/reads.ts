@@ -1,2 +1,1 @@
 export { calibrationHolds, loadInstrument } from './store';
-export type { InstrumentRow } from './store';

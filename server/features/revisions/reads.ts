@@ -1,2 +1,1 @@
 export { digestOf, evidenceOf } from './evidence';
-export type { Evidence } from './evidence';

@@ -1,3 +1,3 @@
-export { benchFacts, benchRequirements, linesOf } from './lines';
+export { benchRequirements, linesOf } from './lines';
 export { findRun, runsOfRevision, summaryOf } from './store';
 export type { StoredRun } from './store';

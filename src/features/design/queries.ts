@@ -1,6 +1,5 @@
 import { queryOptions } from '@tanstack/react-query';
 import { catalogueRoutes } from '#contracts/catalogue';
-import type { CatalogueEntry } from '#contracts/catalogue';
 import { revisionRoutes } from '#contracts/revisions';
 import type { Revision } from '#contracts/revisions';
 import { callRoute } from '../../lib/fetch-json';
@@ -18,6 +17,3 @@ export const saveDraft = (revisionId: string, version: number, document: Draft):
 
 export const readRevision = (revisionId: string): Promise<Revision> =>
   callRoute(revisionRoutes.readRevision, { params: { revisionId } });
-
-export const entriesOf = (entries: readonly CatalogueEntry[], kind: CatalogueEntry['kind']): CatalogueEntry[] =>
-  entries.filter((entry) => entry.kind === kind);

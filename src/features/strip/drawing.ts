@@ -99,7 +99,6 @@ export interface Drawing {
 }
 
 export const mirrored = (rect: Rect): Rect => ({ ...rect, y0: -rect.y1, y1: -rect.y0 });
-export const shifted = (rect: Rect, x: number): Rect => ({ ...rect, x0: rect.x0 + x, x1: rect.x1 + x });
 
 export function hullOf(rects: readonly Rect[]): Rect | null {
   if (rects.length === 0) return null;

@@ -1,1 +1,0 @@
-export * from '#physics/vibration-document';
