@@ -383,6 +383,12 @@ describe('what cannot be built or rest', () => {
       0.00325,
     ],
     [
+      'stops far from the rest',
+      withValue(reference, 'stops', { lower: '10 mm', upper: '12 mm', stiffness: 1000 }),
+      'stops',
+      /far beyond the stops/,
+    ],
+    [
       'spring that pushes away',
       withValue(reference, 'suspension', { kind: 'spring', stiffness: -100 }),
       'suspension',

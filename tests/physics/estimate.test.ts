@@ -1,9 +1,10 @@
 import fc from 'fast-check';
 import { describe, expect, test } from 'vitest';
-import { estimate } from '#physics/estimate';
+import { DocumentError, estimate } from '#physics/estimate';
 import type { Estimate } from '#physics/estimate';
 import { handbookValue, numberOf, referenceCase } from '../support/handbook';
 import { anyDesign, resistorOnTone } from './arbitrary-documents';
+import { wideDesign, wideVibration } from './wide-documents';
 
 type Document = Record<string, unknown> & { coils: Record<string, unknown>[]; magnets: Record<string, unknown>[] };
 
@@ -90,6 +91,12 @@ describe('positions of the curve', () => {
     expect(curve.couplingPeakAt).toBeCloseTo(0.005567299, 8);
   });
 
+  test('of two equal peaks the one nearer to rest is named', () => {
+    const centred = referenceCase('F2-02').design;
+    const left = { ...centred, suspension: { kind: 'spring', stiffness: 2467.4011, neutralAt: '-1 mm' } };
+    expect(estimate(left, tone).curve.couplingPeakAt).toBeCloseTo(-0.005567299, 8);
+  });
+
   test.each([[['0']], [[NaN]], [[11]], ['zero'], [{}]])('%j is refused', (positions) => {
     expect(() => estimate(design, tone, { positions: positions as number[] })).toThrow(/positions/);
   });
@@ -138,6 +145,27 @@ describe('any valid document', () => {
       { numRuns: 40, seed: 21, endOnFailure: true },
     );
   });
+});
+
+test('whatever the schema takes is answered: finite numbers, honest nulls or named errors', () => {
+  fc.assert(
+    fc.property(wideDesign, wideVibration, (document, vibration) => {
+      let answer: Estimate;
+      try {
+        answer = estimate(document, vibration);
+      } catch (error) {
+        if (!(error instanceof DocumentError)) throw error;
+        expect(error.issues.every(({ path, message }) => path !== '' && message !== '')).toBe(true);
+        return;
+      }
+      expect(notFinite(answer)).toEqual([]);
+      const codes = answer.cautions.map(({ code }) => code);
+      // A balance that does not close is never passed over in silence
+      if (Math.abs(answer.power.residual ?? 0) > 0.005) expect(codes).toContain('not-trustworthy');
+      if (answer.response.loadPower === null) expect(answer.notes.length).toBeGreaterThan(0);
+    }),
+    { numRuns: 14, seed: 4, endOnFailure: true },
+  );
 });
 
 describe('laws', () => {

@@ -133,9 +133,25 @@ function faceIssues(document: AcrossDesign, travel: readonly [number, number]): 
   return issues;
 }
 
+/** A rest so far beyond the stops that the assembly never comes near it. */
+function restIssues(document: DesignDocument, rest: number): DocumentIssue[] {
+  const { stops } = document;
+  if (stops === null || stops.lower === null || stops.upper === null) return [];
+  const span = stops.upper - stops.lower;
+  const beyond = Math.max(rest - stops.upper, stops.lower - rest);
+  if (beyond <= span) return [];
+  return [
+    {
+      path: 'stops',
+      value: 'an object',
+      message: `the assembly would rest at ${mm(rest)}, far beyond the stops from ${mm(stops.lower)} to ${mm(stops.upper)}: between them it has no rest position`,
+    },
+  ];
+}
+
 /**
  * What cannot be built: wire and turns that do not fit their window, magnets that do not fit the bore or the gap where
- * they surely pass.
+ * they surely pass; stops that keep the assembly from its rest.
  *
  * @param rest position of the assembly at rest (m)
  * @returns an empty list where the parts fit
@@ -144,5 +160,5 @@ export function fitIssues(document: DesignDocument, rest = 0): DocumentIssue[] {
   const windows = document.coils.flatMap((coil, index) => windowIssues(coil, index));
   const travel = travelOf(document, rest);
   const clash = document.layout === 'through' ? boreIssues(document, travel) : faceIssues(document, travel);
-  return [...windows, ...clash];
+  return [...windows, ...clash, ...restIssues(document, rest)];
 }
