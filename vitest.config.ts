@@ -25,7 +25,7 @@ export default defineConfig({
           setupFiles: ['tests/support/client-setup.ts'],
         },
       },
-      node('e2e', { maxConcurrency: 3, testTimeout: 240_000, hookTimeout: 120_000, fileParallelism: false }),
+      node('e2e', { maxConcurrency: 2, testTimeout: 240_000, hookTimeout: 120_000, fileParallelism: false }),
       node('tooling', { testTimeout: 120_000 }),
     ],
   },

@@ -68,7 +68,7 @@ export function Plot(props: PlotProps) {
       <figcaption id={captionId} className="sr-only">
         {title}. {summary}
       </figcaption>
-      <div aria-hidden className={classNames('relative', stale && 'opacity-55')} style={{ height }} data-plot={title}>
+      <div aria-hidden className={classNames('relative', stale && 'grayscale')} style={{ height }} data-plot={title}>
         <ErrorBoundary fallback={<p className="text-graphite">The plot could not be drawn; its figures are below.</p>}>
           <Suspense fallback={<Pending label="Drawing the plot" lines={5} className="p-4" />}>
             <PlotDrawing figure={figure} height={height} onReady={(element) => (graph.current = element)} />

@@ -83,7 +83,7 @@ export async function axeViolations(page: Page): Promise<string[]> {
 export async function settled(page: Page): Promise<void> {
   await page.waitForLoadState('networkidle');
   await page.waitForFunction(() => document.querySelector('[aria-busy="true"]') === null, undefined, {
-    timeout: 15_000,
+    timeout: 60_000,
   });
   await page.evaluate(() => document.fonts.ready);
 }
