@@ -112,7 +112,11 @@ function DraftPage({ revision, letters }: PageProps) {
             }}
           />
         ) : (
-          <RestoredNotice restored={draft.restored} refused={state.kind === 'refused' ? state.message : null} />
+          <RestoredNotice
+            restored={draft.restored}
+            saved={state.kind === 'saved'}
+            refused={state.kind === 'refused' ? state.message : null}
+          />
         )
       }
     />

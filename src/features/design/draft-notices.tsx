@@ -4,7 +4,15 @@ import { formatDateTime } from '../../lib/format';
 import { Caution } from '../../ui/caution';
 
 /** What was typed here before and had not reached the server; or why the server will not have it. */
-export function RestoredNotice({ restored, refused }: { restored: boolean; refused: string | null }) {
+export function RestoredNotice({
+  restored,
+  saved,
+  refused,
+}: {
+  restored: boolean;
+  saved: boolean;
+  refused: string | null;
+}) {
   if (refused !== null)
     return (
       <Caution severity="stop" title="The draft was not saved.">
@@ -14,7 +22,8 @@ export function RestoredNotice({ restored, refused }: { restored: boolean; refus
   if (!restored) return null;
   return (
     <Caution severity="info" title="Restored.">
-      What you typed here last time had not reached the server; it was kept in this browser and is being saved now.
+      What you typed here last time had not reached the server; it was kept in this browser and{' '}
+      {saved ? 'has been saved now' : 'is being saved'}.
     </Caution>
   );
 }

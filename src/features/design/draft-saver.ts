@@ -248,7 +248,6 @@ export class DraftSaver {
       this.sent = sending;
       if (sameDocument(this.draft, sending)) {
         this.state = { kind: 'saved', at: now().toISOString() };
-        this.restored = false;
         keep.clear();
       } else {
         this.state = { kind: 'waiting' };

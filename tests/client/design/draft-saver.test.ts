@@ -125,6 +125,8 @@ describe('DraftSaver', () => {
     expect(saver.read()).toMatchObject({ draft: { turns: '850' }, restored: true });
     await vi.advanceTimersByTimeAsync(1000);
     expect(save.mock.calls).toEqual([[3, { turns: '850' }]]);
+    expect(saver.read()).toMatchObject({ restored: true, state: { kind: 'saved' } });
+    saver.edit({ turns: '851' });
     expect(saver.read().restored).toBe(false);
   });
 
