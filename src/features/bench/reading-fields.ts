@@ -78,7 +78,7 @@ export async function readReading(
   if (outside && reason === '')
     issues.push({
       path: 'outOfCalibrationReason',
-      message: `${instrument.number} is out of calibration: say why it was used all the same.`,
+      message: `${instrument.number} is out of calibration: say why it was used.`,
     });
   if (issues.length > 0 || value === null) return { ok: false, issues };
   const parsed = ReadingCreate.safeParse({
