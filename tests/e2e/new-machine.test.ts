@@ -1,5 +1,6 @@
 import { spawnSync } from 'node:child_process';
 import { statSync } from 'node:fs';
+import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import type { AddressInfo } from 'node:net';
 import { SMTPServer } from 'smtp-server';
@@ -90,7 +91,7 @@ describe('npm start', () => {
     const { status, stderr } = spawnSync(process.execPath, ['scripts/start.mjs', '--no-demo'], {
       encoding: 'utf8',
       timeout: 60_000,
-      env: programEnvironment({ DATA_DIR: '/tmp/tremolode-never-served', ...environment }),
+      env: programEnvironment({ DATA_DIR: join(tmpdir(), 'tremolode-never-served'), ...environment }),
     });
     expect([status, stderr]).toEqual([1, expect.stringContaining(message)]);
   });
