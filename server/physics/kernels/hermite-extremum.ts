@@ -15,7 +15,7 @@ export function innerTurn(h: number, u0: number, v0: number, a0: number, u1: num
   const c5 = 6 * gap - 3 * turn + bend;
   const slope = (t: number): number => d0 + t * (2 * s0 + t * (3 * c3 + t * (4 * c4 + t * 5 * c5)));
   let [low, high] = [0, 1];
-  for (let n = 0; n < 34; n++) {
+  for (let n = 0; n < 50; n++) {
     const middle = 0.5 * (low + high);
     if (slope(middle) * d0 > 0) low = middle;
     else high = middle;
@@ -30,7 +30,7 @@ export function innerPeak(h: number, v0: number, a0: number, v1: number, a1: num
   const c2 = 3 * (v1 - v0) - 2 * d0 - d1;
   const c3 = d0 + d1 - 2 * (v1 - v0);
   let [low, high] = [0, 1];
-  for (let n = 0; n < 34; n++) {
+  for (let n = 0; n < 50; n++) {
     const middle = 0.5 * (low + high);
     if ((d0 + middle * (2 * c2 + middle * 3 * c3)) * d0 > 0) low = middle;
     else high = middle;

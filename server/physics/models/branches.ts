@@ -43,19 +43,10 @@ function linearStart(oscillator: PortOscillator, omega: number, drive: Float64Ar
   return out;
 }
 
-/**
- * The one steady orbit of an oscillator with a linear spring, from its linear response. Without inductance it is the only
- * one and stable: the port is then a damper d/dt G(u) with G rising, and the difference w of two motions obeys
- * m ÿ + (c + γ(t)) ẏ + k y = const with w = ẏ, γ ≥ 0, whose energy falls until w is zero.
- */
+/** The one steady orbit of an oscillator that is known to have no other, from its linear response. */
 export function onlyOrbit(oscillator: PortOscillator, omega: number, drive: Float64Array): SteadyOrbit {
   const orbit = findOrbit(oscillator, omega, drive, linearStart(oscillator, omega, drive, 0));
-  const inductive = oscillator.inductance > 0 && Number.isFinite(oscillator.resistance);
-  const settles = !inductive && oscillator.damping > 0;
-  return {
-    ...orbit,
-    stable: orbit.converged && (settles || largestMultiplier(oscillator, orbit.displacement, omega) < 1),
-  };
+  return { ...orbit, stable: orbit.converged && largestMultiplier(oscillator, orbit.displacement, omega) < 1 };
 }
 
 /**

@@ -370,7 +370,10 @@ export class Motion {
 
   /** Takes the trial over. */
   private accept(h: number): void {
-    const [before, beforeV] = [this.u, this.v];
+    if (this.v * this.trialV < 0) {
+      const turn = innerTurn(h, this.u, this.v, this.as[0]!, this.trialU, this.trialV, this.as[STAGES - 1]!);
+      this.peak = Math.max(this.peak, Math.abs(turn));
+    }
     this.t += h;
     this.u = this.trialU;
     this.v = this.trialV;
@@ -389,10 +392,6 @@ export class Motion {
       this.carried[2] = this.circuit.rectifier;
       this.carried[3] = this.circuit.converter;
     }
-    if (beforeV * this.v < 0) {
-      const turn = innerTurn(h, before, beforeV, this.as[0]!, this.u, this.v, this.accelerationNow());
-      this.peak = Math.max(this.peak, Math.abs(turn));
-    }
     this.peak = Math.max(this.peak, Math.abs(this.u));
     this.emfPeak = Math.max(this.emfPeak, Math.abs(this.emf));
     this.uScale = Math.max(this.uScale, Math.abs(this.u));
@@ -402,16 +401,6 @@ export class Motion {
       this.voltageScale[c] = Math.max(this.voltageScale[c]!, Math.abs(this.voltage[c]!));
     this.steps++;
     this.plan?.push(h);
-  }
-
-  /** d²u/dt² at the present state, m/s². */
-  private accelerationNow(): number {
-    const { mass, damping, quadraticDrag, restPosition, suspension, coupling } = this.device;
-    const { u, v } = this;
-    const stop = this.upper || this.lower ? this.stopForce(u, v) : 0;
-    const drag = (damping + quadraticDrag * Math.abs(v)) * v;
-    const pull = coupling.at(restPosition + u) * this.current;
-    return (suspension.force(u) - drag - pull + stop) / mass - this.accelerationAt(this.t);
   }
 
   private carry(): void {

@@ -1,6 +1,5 @@
 import type { Device, DeviceResponse, Tone } from './device';
 import { runLinearRecord } from './recording-linear';
-import { runQuickly } from './quick-run';
 import { MOST_STEPS, recordedExcitation, runRecord } from './record-run';
 import type { Excitation, RecordRun } from './record-run';
 import { hasConstantCoupling, isMechanicallyLinear } from './oscillator';
@@ -19,7 +18,6 @@ export function respondToRecordByStepping(device: Device, acceleration: Float64A
   if (tooLong) return notComputed(tooLong);
   const excitation = recordedExcitation(acceleration, rate);
   const constant = hasConstantCoupling(device);
-  const quick = runQuickly(device, false, acceleration, rate);
   if (isMechanicallyLinear(device) && constant) {
     const open = runLinearRecord(
       {
@@ -34,12 +32,10 @@ export function respondToRecordByStepping(device: Device, acceleration: Float64A
       acceleration,
       rate,
     );
-    return respondByStepping(device, excitation, { rms: Math.sqrt(open.emf2), peak: open.emfPeak }, quick);
+    return respondByStepping(device, excitation, { rms: Math.sqrt(open.emf2), peak: open.emfPeak });
   }
-  const run =
-    runQuickly(device, true, acceleration, rate) ??
-    runRecord({ ...device, coilInductance: 0 }, null, excitation, TOLERANCE);
-  return respondByStepping(device, excitation, { rms: Math.sqrt(run.mean.emf2), peak: run.emfPeak }, quick);
+  const run = runRecord({ ...device, coilInductance: 0 }, null, excitation, TOLERANCE);
+  return respondByStepping(device, excitation, { rms: Math.sqrt(run.mean.emf2), peak: run.emfPeak });
 }
 
 /**
@@ -55,14 +51,13 @@ export function whyTooLong(device: Device, duration: number, fastest: number): s
     : null;
 }
 
-/** Steps a device from rest through an excitation, unless a run is at hand; the open-circuit EMF is given. */
+/** Steps a device from rest through an excitation; the open-circuit EMF is given. */
 export function respondByStepping(
   device: Device,
   excitation: Excitation,
   open: { rms: number | null; peak: number | null },
-  quick: RecordRun | null = null,
 ): DeviceResponse {
-  const run = quick ?? runRecord(device, device.circuit, excitation, TOLERANCE);
+  const run = runRecord(device, device.circuit, excitation, TOLERANCE);
   const coil = device.coilResistance * run.mean.current2;
   const notes = [...modelNote(device.circuit), ...rangeNotes(device, run)];
   if (!run.completed) notes.push('The motion could not be followed to the end of the record.');
@@ -71,9 +66,7 @@ export function respondByStepping(
   const out = mean.load + coil + mean.rectifier + mean.converter + mean.mechanicalLoss + mean.stops + run.stored;
   return {
     response: {
-      method: quick
-        ? 'time stepping (linear part exact, Runge–Kutta of order 4)'
-        : 'time stepping (implicit–explicit Runge–Kutta of order 4, step control)',
+      method: 'time stepping (implicit–explicit Runge–Kutta of order 4, step control)',
       converged: run.completed,
       openCircuitEmfRms: open.rms,
       openCircuitEmfPeak: open.peak,
